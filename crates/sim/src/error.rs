@@ -1,0 +1,60 @@
+//! What can go wrong before or beside a run. A run that the solver gives up is not an error but
+//! an ending: see [`crate::RunEnd`].
+
+use std::path::PathBuf;
+
+/// Why a run could not start or its result could not be written.
+#[derive(Debug, thiserror::Error)]
+pub enum SimError {
+    /// The start state does not fit the circuit.
+    #[error("the start state has {got} values, the circuit has {expected} states")]
+    StartLength {
+        /// States of the circuit.
+        expected: usize,
+        /// Values given.
+        got: usize,
+    },
+    /// A value of the start state is not a finite number.
+    #[error("the start state of \"{state}\" is {value}, not a finite number")]
+    StartNotFinite {
+        /// Name of the state.
+        state: String,
+        /// The value.
+        value: f64,
+    },
+    /// The run ends before it starts.
+    #[error("a run from {start} s to {end} s has no duration")]
+    Span {
+        /// Start time, s.
+        start: f64,
+        /// End time, s.
+        end: f64,
+    },
+    /// A solver option is outside its range.
+    #[error("solver option {option} is {value}; allowed: {allowed}")]
+    Option {
+        /// Name of the option.
+        option: &'static str,
+        /// The value.
+        value: f64,
+        /// Range in words.
+        allowed: &'static str,
+    },
+    /// The circuit has no such state or signal.
+    #[error("no trace is named \"{name}\"")]
+    UnknownColumn {
+        /// The name asked for.
+        name: String,
+    },
+    /// The solver refused the problem as posed.
+    #[error("the solver refused the problem: {0}")]
+    Setup(String),
+    /// A result file could not be written.
+    #[error("cannot write {}: {source}", path.display())]
+    Write {
+        /// The file.
+        path: PathBuf,
+        /// What the system said.
+        source: std::io::Error,
+    },
+}
