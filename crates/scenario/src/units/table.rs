@@ -1,0 +1,285 @@
+//! The table of units: each factor is the definition of the unit, spelled as a product.
+//!
+//! # Source
+//! ISO 80000 parts 1, 3 and 4 for SI; NIST Special Publication 811 (2008), Appendix B, for the
+//! definitions of inch (0.0254 m), pound (0.45359237 kg), standard gravity (9.80665 m/s2), the
+//! gallon (231 in3), horsepower (550 ft lbf/s) and the temperature scales. All of these are exact.
+
+use helmsplit_model::Quantity::{self, *};
+
+/// One row: what to type, and `si = (value + shift) * times / over`.
+pub(super) struct Definition {
+    pub(super) quantity: Quantity,
+    pub(super) symbol: &'static str,
+    pub(super) aliases: &'static [&'static str],
+    pub(super) times: &'static [&'static str],
+    pub(super) over: &'static [&'static str],
+    pub(super) shift: &'static str,
+}
+
+const fn row(
+    quantity: Quantity,
+    symbol: &'static str,
+    times: &'static [&'static str],
+    over: &'static [&'static str],
+    aliases: &'static [&'static str],
+) -> Definition {
+    Definition {
+        quantity,
+        symbol,
+        aliases,
+        times,
+        over,
+        shift: "0",
+    }
+}
+
+const fn shifted(
+    symbol: &'static str,
+    shift: &'static str,
+    times: &'static [&'static str],
+    over: &'static [&'static str],
+    aliases: &'static [&'static str],
+) -> Definition {
+    Definition {
+        quantity: Temperature,
+        symbol,
+        aliases,
+        times,
+        over,
+        shift,
+    }
+}
+
+/// Inch and foot in m, pound and ounce in kg, standard gravity in m/s2.
+const IN: &str = "0.0254";
+const FT: &str = "0.3048";
+const LB: &str = "0.45359237";
+const G0: &str = "9.80665";
+/// 231 cubic inches in m3: 231 * 0.0254^3, which ends after twelve digits.
+const GAL: &str = "0.003785411784";
+/// Fifty digits, far beyond what an `f64` can tell apart.
+const PI: &str = "3.14159265358979323846264338327950288419716939937510";
+/// Seconds in a minute.
+const MIN: &str = "60";
+
+/// Every unit. Within one quantity the SI unit stands first.
+pub(super) const DEFINITIONS: &[Definition] = &[
+    row(Time, "s", &["1"], &[], &["sec"]),
+    row(Time, "ms", &["0.001"], &[], &["msec"]),
+    row(Time, "min", &[MIN], &[], &[]),
+    row(Time, "h", &["3600"], &[], &["hr"]),
+    row(Length, "m", &["1"], &[], &[]),
+    row(Length, "mm", &["0.001"], &[], &[]),
+    row(Length, "um", &["0.000001"], &[], &["micron"]),
+    row(Length, "cm", &["0.01"], &[], &[]),
+    row(Length, "in", &[IN], &[], &["inch", "\""]),
+    row(Length, "thou", &[IN, "0.001"], &[], &["mil"]),
+    row(Length, "ft", &[FT], &[], &["foot"]),
+    row(Area, "m2", &["1"], &[], &["sq m"]),
+    row(Area, "mm2", &["0.000001"], &[], &["sq mm"]),
+    row(Area, "cm2", &["0.0001"], &[], &["sq cm"]),
+    row(Area, "in2", &[IN, IN], &[], &["sq in"]),
+    row(Area, "ft2", &[FT, FT], &[], &["sq ft"]),
+    row(Volume, "m3", &["1"], &[], &[]),
+    row(Volume, "mm3", &["0.000000001"], &[], &[]),
+    row(Volume, "cm3", &["0.000001"], &[], &["cc", "ccm"]),
+    row(Volume, "mL", &["0.000001"], &[], &["ml"]),
+    row(Volume, "L", &["0.001"], &[], &["l", "dm3", "ltr"]),
+    row(Volume, "in3", &[IN, IN, IN], &[], &["cu in"]),
+    row(Volume, "gal", &[GAL], &[], &[]),
+    row(Angle, "rad", &["1"], &[], &[]),
+    row(Angle, "deg", &[PI], &["180"], &["degree", "degrees"]),
+    row(Angle, "rev", &["2", PI], &[], &["turn", "turns"]),
+    row(Velocity, "m/s", &["1"], &[], &[]),
+    row(Velocity, "mm/s", &["0.001"], &[], &[]),
+    row(Velocity, "cm/s", &["0.01"], &[], &[]),
+    row(Velocity, "km/h", &["1000"], &["3600"], &["kph"]),
+    row(Velocity, "in/s", &[IN], &[], &["ips"]),
+    row(Velocity, "ft/s", &[FT], &[], &["fps"]),
+    row(AngularVelocity, "rad/s", &["1"], &[], &[]),
+    row(
+        AngularVelocity,
+        "rpm",
+        &[PI],
+        &["30"],
+        &["RPM", "r/min", "rev/min", "1/min", "turns/min"],
+    ),
+    row(
+        AngularVelocity,
+        "rev/s",
+        &["2", PI],
+        &[],
+        &["r/s", "1/s", "rps"],
+    ),
+    row(AngularVelocity, "turns/s", &["2", PI], &[], &["turn/s"]),
+    row(AngularVelocity, "deg/s", &[PI], &["180"], &[]),
+    row(Mass, "kg", &["1"], &[], &[]),
+    row(Mass, "g", &["0.001"], &[], &[]),
+    row(Mass, "t", &["1000"], &[], &["tonne"]),
+    row(Mass, "lb", &[LB], &[], &["lbm", "lbs"]),
+    row(Mass, "oz", &[LB], &["16"], &[]),
+    row(Inertia, "kg m2", &["1"], &[], &["kgm2"]),
+    row(Inertia, "g m2", &["0.001"], &[], &["gm2"]),
+    row(Inertia, "kg cm2", &["0.0001"], &[], &["kgcm2"]),
+    row(Inertia, "lb ft2", &[LB, FT, FT], &[], &[]),
+    row(Inertia, "lb in2", &[LB, IN, IN], &[], &[]),
+    row(Force, "N", &["1"], &[], &[]),
+    row(Force, "kN", &["1000"], &[], &[]),
+    row(Force, "daN", &["10"], &[], &[]),
+    row(Force, "lbf", &[LB, G0], &[], &[]),
+    row(Torque, "N m", &["1"], &[], &["Nm"]),
+    row(Torque, "mN m", &["0.001"], &[], &["mNm"]),
+    row(Torque, "kN m", &["1000"], &[], &["kNm"]),
+    row(
+        Torque,
+        "lbf ft",
+        &[LB, G0, FT],
+        &[],
+        &["ft lbf", "lb ft", "ft lb"],
+    ),
+    row(
+        Torque,
+        "lbf in",
+        &[LB, G0, IN],
+        &[],
+        &["in lbf", "lb in", "in lb"],
+    ),
+    row(Pressure, "Pa", &["1"], &[], &["N/m2"]),
+    row(Pressure, "bar", &["100000"], &[], &["Bar"]),
+    row(Pressure, "mbar", &["100"], &[], &[]),
+    row(Pressure, "kPa", &["1000"], &[], &[]),
+    row(Pressure, "MPa", &["1000000"], &[], &["N/mm2"]),
+    row(Pressure, "psi", &[LB, G0], &[IN, IN], &["PSI", "lbf/in2"]),
+    row(Flow, "m3/s", &["1"], &[], &[]),
+    row(
+        Flow,
+        "L/min",
+        &["0.001"],
+        &[MIN],
+        &["l/min", "lpm", "LPM", "dm3/min", "lit/min"],
+    ),
+    row(Flow, "mL/min", &["0.000001"], &[MIN], &["ml/min"]),
+    row(Flow, "cm3/min", &["0.000001"], &[MIN], &["cc/min"]),
+    row(Flow, "cm3/s", &["0.000001"], &[], &["cc/s"]),
+    row(Flow, "L/s", &["0.001"], &[], &["l/s"]),
+    row(Flow, "m3/h", &["1"], &["3600"], &[]),
+    row(Flow, "gpm", &[GAL], &[MIN], &["GPM", "gal/min"]),
+    row(Flow, "in3/s", &[IN, IN, IN], &[], &[]),
+    row(Power, "W", &["1"], &[], &[]),
+    row(Power, "kW", &["1000"], &[], &[]),
+    row(Power, "hp", &["550", FT, LB, G0], &[], &["HP"]),
+    row(Energy, "J", &["1"], &[], &[]),
+    row(Energy, "kJ", &["1000"], &[], &[]),
+    row(Energy, "ft lbf", &[FT, LB, G0], &[], &["lbf ft", "ft lb"]),
+    row(Density, "kg/m3", &["1"], &[], &[]),
+    row(
+        Density,
+        "g/cm3",
+        &["1000"],
+        &[],
+        &["kg/L", "kg/l", "g/mL", "kg/dm3"],
+    ),
+    row(Density, "lb/ft3", &[LB], &[FT, FT, FT], &["lbm/ft3"]),
+    row(KinematicViscosity, "m2/s", &["1"], &[], &[]),
+    row(KinematicViscosity, "mm2/s", &["0.000001"], &[], &[]),
+    row(KinematicViscosity, "cSt", &["0.000001"], &[], &["cst"]),
+    shifted("K", "0", &["1"], &[], &["degK"]),
+    shifted("degC", "273.15", &["1"], &[], &["C", "deg C", "celsius"]),
+    shifted(
+        "degF",
+        "459.67",
+        &["5"],
+        &["9"],
+        &["F", "deg F", "fahrenheit"],
+    ),
+    row(BulkModulus, "Pa", &["1"], &[], &["N/m2"]),
+    row(BulkModulus, "GPa", &["1000000000"], &[], &["kN/mm2"]),
+    row(BulkModulus, "MPa", &["1000000"], &[], &["N/mm2"]),
+    row(BulkModulus, "bar", &["100000"], &[], &[]),
+    row(BulkModulus, "kPa", &["1000"], &[], &[]),
+    row(
+        BulkModulus,
+        "psi",
+        &[LB, G0],
+        &[IN, IN],
+        &["PSI", "lbf/in2"],
+    ),
+    row(BulkModulus, "kpsi", &["1000", LB, G0], &[IN, IN], &["ksi"]),
+    row(SpringRate, "N/m", &["1"], &[], &[]),
+    row(SpringRate, "N/mm", &["1000"], &[], &[]),
+    row(SpringRate, "kN/m", &["1000"], &[], &[]),
+    row(SpringRate, "kN/mm", &["1000000"], &[], &[]),
+    row(SpringRate, "lbf/in", &[LB, G0], &[IN], &["lb/in"]),
+    row(Damping, "N s/m", &["1"], &[], &["Ns/m", "N/(m/s)", "kg/s"]),
+    row(Damping, "N s/mm", &["1000"], &[], &["Ns/mm"]),
+    row(Damping, "kN s/m", &["1000"], &[], &["kNs/m"]),
+    row(Damping, "lbf s/in", &[LB, G0], &[IN], &["lb s/in"]),
+    row(
+        TorsionalDamping,
+        "N m s",
+        &["1"],
+        &[],
+        &["Nms", "N m s/rad"],
+    ),
+    row(
+        TorsionalDamping,
+        "lbf in s",
+        &[LB, G0, IN],
+        &[],
+        &["in lbf s"],
+    ),
+    row(FanDrag, "N m s2", &["1"], &[], &["Nms2", "N m s2/rad2"]),
+    row(FanDrag, "lbf in s2", &[LB, G0, IN], &[], &["in lbf s2"]),
+    row(Displacement, "m3/rev", &["1"], &[], &["m3/r"]),
+    row(
+        Displacement,
+        "cm3/rev",
+        &["0.000001"],
+        &[],
+        &["cc/rev", "cm3/r", "ccm/rev", "mL/rev", "cm3/turn"],
+    ),
+    row(Displacement, "L/rev", &["0.001"], &[], &["l/rev"]),
+    row(
+        Displacement,
+        "in3/rev",
+        &[IN, IN, IN],
+        &[],
+        &["cir", "in3/r", "cu in/rev"],
+    ),
+    row(LeakageCoefficient, "m3/(s Pa)", &["1"], &[], &["m3/s/Pa"]),
+    row(
+        LeakageCoefficient,
+        "cm3/(min bar)",
+        &["0.000001"],
+        &[MIN, "100000"],
+        &["cc/(min bar)", "cm3/min/bar", "mL/(min bar)"],
+    ),
+    row(
+        LeakageCoefficient,
+        "L/(min bar)",
+        &["0.001"],
+        &[MIN, "100000"],
+        &["l/(min bar)", "L/min/bar", "l/min/bar"],
+    ),
+    row(
+        LeakageCoefficient,
+        "in3/(min psi)",
+        &[IN, IN, IN, IN, IN],
+        &[MIN, LB, G0],
+        &["in3/min/psi"],
+    ),
+    row(
+        LeakageCoefficient,
+        "gpm/psi",
+        &[GAL, IN, IN],
+        &[MIN, LB, G0],
+        &[],
+    ),
+    row(ContactLoss, "s/m", &["1"], &[], &[]),
+    row(ContactLoss, "s/mm", &["1000"], &[], &[]),
+    row(ContactLoss, "s/in", &["1"], &[IN], &[]),
+    row(Ratio, "1", &["1"], &[], &[""]),
+    row(Ratio, "%", &["0.01"], &[], &["percent", "pct"]),
+    row(Count, "1", &["1"], &[], &[""]),
+];
