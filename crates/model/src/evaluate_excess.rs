@@ -1,0 +1,203 @@
+//! The excess side of the right-hand side (M8).
+
+use crate::circuit::Circuit;
+use crate::evaluate::Sums;
+use crate::motor::{HydraulicMotor, MotorFlows};
+use crate::parts::{ExcessSide, LiftGear};
+use crate::profile::{Input, Inputs};
+use crate::real::Real;
+use crate::signal::{Observer, Signal};
+
+impl Circuit {
+    /// Excess port, its relief and its consumer; `inflow` is what comes over the land.
+    #[inline(always)]
+    #[allow(
+        clippy::too_many_arguments,
+        reason = "states, rates and sums of one evaluation"
+    )]
+    pub(crate) fn evaluate_excess<S: Real, O: Observer<S>>(
+        &self,
+        inputs: &Inputs,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        inflow: S,
+        ret: S,
+        sums: &mut Sums<S>,
+    ) {
+        let ix = &self.layout;
+        let oil = &self.parts.oil;
+        let p_e = y[ix.p_e];
+        let command = inputs.get(Input::ExcessCommand);
+        let mut relieved = S::constant(0.0);
+        if let Some(relief) = &self.parts.excess_relief {
+            relieved = self.relieve(relief, ix.y_exr, p_e - ret, y, dy, o, sums);
+            o.put(Signal::ExcessReliefFlow, relieved);
+            o.put(Signal::ExcessReliefOpening, y[ix.y_exr]);
+        }
+        let out = match &self.parts.excess {
+            ExcessSide::Blocked => S::constant(0.0),
+            ExcessSide::Tank { area, edge } => {
+                let flow = edge.flow_given(oil, area * command.max(0.0), p_e - ret);
+                sums.to_return += flow;
+                o.add(Signal::ConsumerLoss, flow * (p_e - ret));
+                flow
+            }
+            ExcessSide::Bench { area, throttle } => {
+                let behind = inputs.get(Input::ExcessPressure);
+                let dp = p_e - behind;
+                let flow = throttle.edge.flow_checked(
+                    oil,
+                    S::constant(area * command.max(0.0)),
+                    throttle.check_pressure,
+                    dp,
+                );
+                o.put(Signal::ExcessBenchPressure, S::constant(behind));
+                o.add(Signal::ConsumerLoss, flow * dp);
+                o.add(Signal::WorkOut, flow * behind);
+                o.add(Signal::VolumeOut, flow);
+                flow
+            }
+            ExcessSide::Motor(motor) => {
+                self.evaluate_excess_motor(command, y, dy, o, motor, ret, sums)
+            }
+            ExcessSide::Lift(gear) => self.evaluate_lift(command, y, dy, o, gear, ret, sums),
+        };
+        if !matches!(self.parts.excess, ExcessSide::Blocked) {
+            o.put(Signal::ExcessCommand, S::constant(command));
+        }
+        o.put(Signal::ExcessOutFlow, out);
+        dy[ix.p_e] = self
+            .parts
+            .valve
+            .excess_port
+            .pressure_rate(oil, p_e, inflow - out - relieved);
+    }
+
+    #[inline(always)]
+    #[allow(
+        clippy::too_many_arguments,
+        reason = "states, rates and sums of one evaluation"
+    )]
+    fn evaluate_excess_motor<S: Real, O: Observer<S>>(
+        &self,
+        command: f64,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        motor: &HydraulicMotor,
+        ret: S,
+        sums: &mut Sums<S>,
+    ) -> S {
+        let ix = &self.layout;
+        let m: MotorFlows<S> = motor.flows(
+            &self.parts.oil,
+            command,
+            y[ix.p_e],
+            y[ix.p_m],
+            ret,
+            y[ix.w_m],
+        );
+        dy[ix.p_m] = m.pressure_rate;
+        dy[ix.w_m] = m.acceleration;
+        sums.to_return += m.through - m.check;
+        o.put(Signal::MotorFlow, m.through);
+        o.put(Signal::AntiCavitationFlow, m.check);
+        o.put(Signal::MotorTorque, m.torque);
+        o.put(Signal::MotorLoadTorque, m.load);
+        o.add(Signal::ConsumerLoss, m.lost);
+        o.add(Signal::WorkOut, m.work);
+        m.valve
+    }
+
+    /// Lift cylinder behind its directional valve (M8.4); gives the flow taken, m3/s.
+    #[inline(always)]
+    #[allow(
+        clippy::too_many_arguments,
+        reason = "states, rates and sums of one evaluation"
+    )]
+    fn evaluate_lift<S: Real, O: Observer<S>>(
+        &self,
+        command: f64,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        gear: &LiftGear,
+        ret: S,
+        sums: &mut Sums<S>,
+    ) -> S {
+        let ix = &self.layout;
+        let oil = &self.parts.oil;
+        let cylinder = &gear.cylinder;
+        let u = command.clamp(-1.0, 1.0);
+        let p_e = y[ix.p_e];
+        let (p_cap, p_rod) = (y[ix.p_cap], y[ix.p_rod]);
+        let open = gear.valve_area * u.abs();
+        let neutral = gear
+            .edge
+            .flow_given(oil, gear.neutral_area * (1.0 - u.abs()), p_e - ret);
+        let lifting = u >= 0.0;
+        let (fed, emptied) = if lifting {
+            (p_cap, p_rod)
+        } else {
+            (p_rod, p_cap)
+        };
+        let supplied =
+            gear.edge
+                .flow_checked(oil, S::constant(open), gear.check_pressure, p_e - fed);
+        let returned = gear.edge.flow_given(oil, open, emptied - ret);
+        let check = |p: S| {
+            gear.edge.flow_checked(
+                oil,
+                S::constant(gear.check_area),
+                gear.check_pressure,
+                ret - p,
+            )
+        };
+        let (suction_cap, suction_rod) = (check(p_cap), check(p_rod));
+        let (in_cap, in_rod) = if lifting {
+            (supplied, -returned)
+        } else {
+            (-returned, supplied)
+        };
+        let (travel, velocity) = (y[ix.y_l], y[ix.v_l]);
+        let leak = (p_cap - p_rod) * cylinder.piston_leak;
+        let (area_a, area_b) = (cylinder.area_a, cylinder.area_b);
+        dy[ix.p_cap] = cylinder.chamber_a().pressure_rate_moving(
+            oil,
+            p_cap,
+            in_cap + suction_cap - leak - velocity * area_a,
+            travel * area_a,
+        );
+        dy[ix.p_rod] = cylinder.chamber_b().pressure_rate_moving(
+            oil,
+            p_rod,
+            in_rod + suction_rod + leak + velocity * area_b,
+            travel * -area_b,
+        );
+        let oil_force = p_cap * area_a - p_rod * area_b;
+        let dry = (velocity * (1.0 / gear.dry_velocity)).tanh() * gear.dry_friction;
+        let drag = velocity * cylinder.damping;
+        let stops = cylinder.stop_force(travel, velocity);
+        dy[ix.y_l] = velocity;
+        dy[ix.v_l] = (oil_force - gear.load - dry - drag + stops) * (1.0 / cylinder.mass);
+        sums.to_return += neutral + returned - suction_cap - suction_rod;
+        o.put(Signal::LiftFlow, in_cap + suction_cap);
+        o.put(Signal::LiftForce, oil_force);
+        o.add(
+            Signal::ConsumerLoss,
+            neutral * (p_e - ret)
+                + supplied * (p_e - fed)
+                + returned * (emptied - ret)
+                + suction_cap * (ret - p_cap)
+                + suction_rod * (ret - p_rod)
+                + leak * (p_cap - p_rod),
+        );
+        o.add(
+            Signal::FrictionLoss,
+            (dry + drag) * velocity + cylinder.stop_loss(travel, velocity),
+        );
+        o.add(Signal::WorkOut, velocity * gear.load);
+        neutral + supplied
+    }
+}

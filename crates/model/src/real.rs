@@ -1,0 +1,128 @@
+//! The scalar that every equation is written for.
+//!
+//! States and everything computed from them are generic; parameters stay `f64`, which is why
+//! mixed operators with `f64` on the right are part of the trait. Write `x * 2.0`.
+
+use std::ops::{Add, AddAssign, Div, DivAssign, Mul, MulAssign, Neg, Sub, SubAssign};
+
+/// A real number that carries its value and, where it is a dual number, its derivatives.
+pub trait Real:
+    Copy
+    + Add<Output = Self>
+    + Sub<Output = Self>
+    + Mul<Output = Self>
+    + Div<Output = Self>
+    + Neg<Output = Self>
+    + AddAssign
+    + SubAssign
+    + MulAssign
+    + DivAssign
+    + Add<f64, Output = Self>
+    + Sub<f64, Output = Self>
+    + Mul<f64, Output = Self>
+    + Div<f64, Output = Self>
+{
+    /// A constant: derivatives are zero.
+    fn constant(value: f64) -> Self;
+
+    /// The value without derivatives.
+    fn value(self) -> f64;
+
+    /// `f(x)` by the chain rule, from the value of `f` and of its derivative at `self.value()`.
+    #[must_use]
+    fn chain(self, f: f64, df: f64) -> Self;
+
+    /// Square root; the derivative at 0 is infinite, so call sites keep the argument positive.
+    #[inline(always)]
+    #[must_use]
+    fn sqrt(self) -> Self {
+        let root = self.value().sqrt();
+        self.chain(root, 0.5 / root)
+    }
+
+    /// Natural exponential.
+    #[inline(always)]
+    #[must_use]
+    fn exp(self) -> Self {
+        let e = self.value().exp();
+        self.chain(e, e)
+    }
+
+    /// Natural logarithm.
+    #[inline(always)]
+    #[must_use]
+    fn ln(self) -> Self {
+        let x = self.value();
+        self.chain(x.ln(), 1.0 / x)
+    }
+
+    /// Power with a constant exponent; the base must be positive.
+    #[inline(always)]
+    #[must_use]
+    fn powf(self, exponent: f64) -> Self {
+        let power = self.value().powf(exponent);
+        self.chain(power, exponent * power / self.value())
+    }
+
+    /// Hyperbolic tangent.
+    #[inline(always)]
+    #[must_use]
+    fn tanh(self) -> Self {
+        let t = self.value().tanh();
+        self.chain(t, 1.0 - t * t)
+    }
+
+    /// Cosine of an angle in rad.
+    #[inline(always)]
+    #[must_use]
+    fn cos(self) -> Self {
+        let (sin, cos) = self.value().sin_cos();
+        self.chain(cos, -sin)
+    }
+
+    /// Absolute value; the derivative at 0 is taken from the right.
+    #[inline(always)]
+    #[must_use]
+    fn abs(self) -> Self {
+        if self.value() < 0.0 { -self } else { self }
+    }
+
+    /// The larger of the value and a constant; the derivative follows the chosen side.
+    #[inline(always)]
+    #[must_use]
+    fn max_with(self, floor: f64) -> Self {
+        if self.value() < floor {
+            Self::constant(floor)
+        } else {
+            self
+        }
+    }
+
+    /// The smaller of the value and a constant; the derivative follows the chosen side.
+    #[inline(always)]
+    #[must_use]
+    fn min_with(self, ceiling: f64) -> Self {
+        if self.value() > ceiling {
+            Self::constant(ceiling)
+        } else {
+            self
+        }
+    }
+}
+
+impl Real for f64 {
+    #[inline(always)]
+    fn constant(value: f64) -> Self {
+        value
+    }
+
+    #[inline(always)]
+    fn value(self) -> f64 {
+        self
+    }
+
+    #[inline(always)]
+    fn chain(self, f: f64, _df: f64) -> Self {
+        f
+    }
+}
