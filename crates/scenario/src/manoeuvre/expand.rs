@@ -1,0 +1,160 @@
+//! From templates to breakpoints.
+
+use std::f64::consts::TAU;
+
+use super::{TemplateKind, TemplateUse, input_row};
+use crate::finding::Finding;
+
+/// The breakpoints of one input while they are put together; times in s, values in SI.
+pub(super) struct Track {
+    level: f64,
+    points: Vec<(f64, f64)>,
+}
+
+impl Track {
+    /// Free breakpoints of an input that rests at `level`.
+    pub(super) fn new(level: f64, points: Vec<(f64, f64)>) -> Self {
+        Self { level, points }
+    }
+
+    pub(super) fn into_points(self) -> Vec<(f64, f64)> {
+        self.points
+    }
+
+    /// Appends what a template writes. `place` is its position in the manoeuvre.
+    pub(super) fn append(&mut self, place: usize, template: &TemplateUse) -> Result<(), Finding> {
+        let base = self.points.last().map_or(self.level, |point| point.1);
+        let path = |field: &str| format!("manoeuvre.templates[{place}].{field}");
+        let points = breakpoints(template, base);
+        // A stretch shorter than its ramp would run backwards.
+        if points.windows(2).any(|pair| pair[1].0 < pair[0].0) {
+            let message = format!(
+                "\"{}\" has a stretch shorter than its ramp",
+                template.kind.key()
+            );
+            return Err(Finding::error(path("ramp"), message, "shorten the ramp"));
+        }
+        if let (Some(&(end, _)), Some(&(begin, _))) = (self.points.last(), points.first())
+            && begin < end
+        {
+            let label = input_row(template.kind.template().drives)
+                .label
+                .to_lowercase();
+            let message = format!(
+                "\"{}\" begins at {begin} s, but {label} already moves until {end} s",
+                template.kind.key()
+            );
+            let hint = format!("begin at {end} s or later");
+            let written = template.value("at").map(crate::value::Value::text);
+            let finding = Finding::error(path("at"), message, hint);
+            return Err(finding.with_value(&written.unwrap_or_default()));
+        }
+        for point in points {
+            // Where one template begins as another ends, both give the same point.
+            if self.points.last() != Some(&point) {
+                self.points.push(point);
+            }
+        }
+        Ok(())
+    }
+}
+
+/// Breakpoints of a template on an input that stands at `base`.
+fn breakpoints(template: &TemplateUse, base: f64) -> Vec<(f64, f64)> {
+    // The table gives each template every number asked for below; a test expands them all.
+    let get = |name: &str| template.si(name).unwrap_or(f64::NAN);
+    let at = get("at");
+    match template.kind {
+        TemplateKind::WheelStep => pulse(at, base, &[(get("rate"), get("turn"))], get("ramp")),
+        TemplateKind::WheelReversal => {
+            let (rate, turn, ramp) = (get("rate"), get("turn"), get("ramp"));
+            vec![
+                (at, base),
+                (at + ramp, rate),
+                (at + turn, rate),
+                (at + turn + 2.0 * ramp, -rate),
+                (at + 2.0 * turn + ramp, -rate),
+                (at + 2.0 * turn + 2.0 * ramp, base),
+            ]
+        }
+        TemplateKind::SlowLockToLock => lock_to_lock(template, at, base),
+        TemplateKind::HoldAtLock => {
+            let stages = [(get("rate"), get("to_lock")), (get("pull"), get("hold"))];
+            pulse(at, base, &stages, get("ramp"))
+        }
+        TemplateKind::SineSteering => {
+            let (rate, period) = (get("rate"), get("period"));
+            let (cycles, points) = (get("cycles"), get("points"));
+            let count = (cycles * points) as usize;
+            (0..=count)
+                .map(|i| {
+                    let part = i as f64 / points;
+                    // Whole and half swings are exactly at the base.
+                    let swing = if i * 2 % (points as usize) == 0 {
+                        0.0
+                    } else {
+                        (TAU * part).sin()
+                    };
+                    (at + part * period, base + rate * swing)
+                })
+                .collect()
+        }
+        TemplateKind::EngineRunUp | TemplateKind::LugDown => {
+            vec![(at, base), (at + get("ramp"), get("to"))]
+        }
+        TemplateKind::ConsumerOn => vec![(at, base), (at + get("ramp"), get("command"))],
+        TemplateKind::ConsumerOff => vec![(at, base), (at + get("ramp"), 0.0)],
+        TemplateKind::PortBlocked => pulse(at, base, &[(0.0, get("for"))], get("ramp")),
+        TemplateKind::KerbStrike => {
+            let top = at + get("rise");
+            let end = top + get("hold");
+            let force = base + get("force");
+            vec![
+                (at, base),
+                (top, force),
+                (end, force),
+                (end + get("fall"), base),
+            ]
+        }
+        TemplateKind::ColdStart => {
+            let (ramp, crank) = (get("ramp"), get("crank_for"));
+            let cranking = get("cranking");
+            vec![
+                (at, 0.0),
+                (at + ramp, cranking),
+                (at + crank, cranking),
+                (at + crank + ramp, get("idle")),
+            ]
+        }
+    }
+}
+
+/// From the base through stages of (value, time from one ramp to the next), back to the base.
+fn pulse(at: f64, base: f64, stages: &[(f64, f64)], ramp: f64) -> Vec<(f64, f64)> {
+    let mut points = vec![(at, base)];
+    let mut begin = at;
+    for &(value, time) in stages {
+        points.push((begin + ramp, value));
+        begin += time;
+        points.push((begin, value));
+    }
+    points.push((begin + ramp, base));
+    points
+}
+
+/// Half the way, pause, all the way back, pause, half the way.
+fn lock_to_lock(template: &TemplateUse, at: f64, base: f64) -> Vec<(f64, f64)> {
+    let get = |name: &str| template.si(name).unwrap_or(f64::NAN);
+    let (rate, rest, ramp) = (get("rate"), get("rest"), get("ramp"));
+    // Ramps at both ends turn half as far as the full rate would.
+    let whole = get("turns") * TAU / rate.abs();
+    let mut points = Vec::new();
+    let mut begin = at;
+    for (way, share) in [(rate, 0.5), (-rate, 1.0), (rate, 0.5)] {
+        let stretch = pulse(begin, base, &[(way, share * whole)], ramp);
+        begin = stretch.last().map_or(begin, |point| point.0) + rest;
+        points.extend(stretch);
+    }
+    points.dedup();
+    points
+}
