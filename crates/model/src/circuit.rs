@@ -151,18 +151,23 @@ impl Circuit {
     /// Exact Jacobian, column by column: `d rate_i / d state_j` at `j * n + i`.
     pub fn jacobian(&self, inputs: &Inputs, states: &[f64], column_major: &mut [f64]) {
         match self.state_count() {
-            n if n <= NARROW => self.columns::<NARROW>(inputs, states, 0, column_major),
-            n if n <= MIDDLE => self.columns::<MIDDLE>(inputs, states, 0, column_major),
+            n if n <= NARROW => {
+                self.columns::<NARROW, NARROW>(inputs, states, 0, column_major);
+            }
+            n if n <= MIDDLE => {
+                self.columns::<MIDDLE, MIDDLE>(inputs, states, 0, column_major);
+            }
             n => {
                 for first in (0..n).step_by(WIDE) {
-                    self.columns::<WIDE>(inputs, states, first, column_major);
+                    self.columns::<WIDE, MOST_STATES>(inputs, states, first, column_major);
                 }
             }
         }
     }
 
-    /// Columns `first .. first + N` of the Jacobian by one pass of the dual number.
-    fn columns<const N: usize>(
+    /// Columns `first .. first + N` of the Jacobian by one pass of the dual number; `ROOM` is at
+    /// least the number of states (clearing room that is not used would cost as much as the pass).
+    fn columns<const N: usize, const ROOM: usize>(
         &self,
         inputs: &Inputs,
         states: &[f64],
@@ -170,8 +175,8 @@ impl Circuit {
         column_major: &mut [f64],
     ) {
         let n = self.state_count();
-        let mut y = [Dual::<N>::constant(0.0); MOST_STATES];
-        let mut dy = [Dual::<N>::constant(0.0); MOST_STATES];
+        let mut y = [Dual::<N>::constant(0.0); ROOM];
+        let mut dy = [Dual::<N>::constant(0.0); ROOM];
         for (i, (dual, &value)) in y.iter_mut().zip(states).enumerate() {
             *dual = Dual::variable(value, i.wrapping_sub(first));
         }

@@ -178,6 +178,11 @@ impl<const N: usize> Real for Dual<N> {
     fn chain(self, f: f64, df: f64) -> Self {
         self.map(f, |a| a * df)
     }
+
+    #[inline(always)]
+    fn chain2(self, other: Self, f: f64, by_self: f64, by_other: f64) -> Self {
+        self.zip(other, f, |a, b| a * by_self + b * by_other)
+    }
 }
 
 #[cfg(test)]

@@ -23,7 +23,9 @@ impl EndStop {
         if penetration.value() <= 0.0 {
             return S::constant(0.0);
         }
-        (penetration * self.stiffness * (rate * self.loss + 1.0)).max_with(0.0)
+        penetration.bivariate(rate, |s, rate| {
+            (s * self.stiffness * (rate * self.loss + 1.0)).max_with(0.0)
+        })
     }
 
     /// Energy held by the stop's spring, J.

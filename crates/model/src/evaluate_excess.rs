@@ -176,7 +176,8 @@ impl Circuit {
             travel * -area_b,
         );
         let oil_force = p_cap * area_a - p_rod * area_b;
-        let dry = (velocity * (1.0 / gear.dry_velocity)).tanh() * gear.dry_friction;
+        let dry =
+            velocity.univariate(|v| (v * (1.0 / gear.dry_velocity)).tanh() * gear.dry_friction);
         let drag = velocity * cylinder.damping;
         let stops = cylinder.stop_force(travel, velocity);
         dy[ix.y_l] = velocity;

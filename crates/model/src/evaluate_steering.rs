@@ -249,7 +249,7 @@ impl Circuit {
                 coulomb,
                 velocity: width,
             } => {
-                let force = (velocity * (1.0 / width)).tanh() * *coulomb;
+                let force = velocity.univariate(|v| (v * (1.0 / width)).tanh() * *coulomb);
                 (force, force * velocity)
             }
             Friction::Bristle(law) => {

@@ -46,13 +46,18 @@ impl Bristle {
     /// (m/s) and deflection (m).
     #[inline(always)]
     pub fn force<S: Real>(&self, velocity: S, deflection: S) -> (S, S) {
+        let rate = velocity.bivariate(deflection, |v, z| self.rate(v, z));
+        let force = deflection * self.stiffness + rate * self.damping + velocity * self.viscous;
+        (force, rate)
+    }
+
+    #[inline(always)]
+    fn rate<S: Real>(&self, velocity: S, deflection: S) -> S {
         let w = BRISTLE_VELOCITY;
         let speed = (velocity * velocity + w * w).sqrt() - w;
         let relative = velocity * (1.0 / self.stribeck_velocity);
         let bound = (-(relative * relative)).exp() * (self.breakaway - self.coulomb) + self.coulomb;
-        let rate = velocity - speed * deflection * self.stiffness / bound;
-        let force = deflection * self.stiffness + rate * self.damping + velocity * self.viscous;
-        (force, rate)
+        velocity - speed * deflection * self.stiffness / bound
     }
 }
 

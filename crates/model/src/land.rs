@@ -2,6 +2,7 @@
 
 use std::f64::consts::PI;
 
+use crate::dual::Dual;
 use crate::monotone_cubic::MonotoneCubic;
 use crate::real::Real;
 use crate::smooth::{ramp, ramp_slope};
@@ -80,6 +81,17 @@ impl MeteringLand {
     /// with cone angle; circular segment and triangle: plane geometry.
     #[inline(always)]
     pub fn opening<S: Real>(&self, travel: S) -> Opening<S> {
+        let narrow = self.opening_at(Dual::<1>::variable(travel.value(), 0));
+        let widen = |n: Dual<1>| travel.chain(n.value, n.slopes[0]);
+        Opening {
+            area: widen(narrow.area),
+            slope: widen(narrow.slope),
+            gap: widen(narrow.gap),
+        }
+    }
+
+    #[inline(always)]
+    fn opening_at<S: Real>(&self, travel: S) -> Opening<S> {
         let reach = travel - self.overlap;
         let z = ramp(reach, OPENING_WIDTH);
         let dz = ramp_slope(reach, OPENING_WIDTH);
@@ -185,7 +197,6 @@ fn segment<S: Real>(depth: S, diameter: f64) -> (S, S) {
 #[cfg(test)]
 mod tests {
     use super::*;
-    use crate::dual::Dual;
 
     fn shapes() -> Vec<LandShape> {
         let table =

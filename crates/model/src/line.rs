@@ -60,6 +60,11 @@ impl Line {
     /// Reibungsvorgaengen*, 1913, smooth walls, Re up to 1e5.
     #[inline(always)]
     pub fn segment_drop<S: Real>(&self, oil: &Oil, flow: S) -> S {
+        flow.univariate(|q| self.segment_drop_at(oil, q))
+    }
+
+    #[inline(always)]
+    fn segment_drop_at<S: Real>(&self, oil: &Oil, flow: S) -> S {
         let share = 1.0 / self.count();
         let velocity = flow * (1.0 / self.area());
         let speed = velocity.abs();

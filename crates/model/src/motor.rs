@@ -97,8 +97,8 @@ impl HydraulicMotor {
         );
         let ideal = dp * self.displacement_rad;
         let torque = ideal * self.efficiency;
-        let dry = (speed * (1.0 / self.dry_speed)).tanh() * self.dry_torque;
-        let drag = speed * self.viscous + speed * speed.abs() * self.fan_drag;
+        let dry = speed.univariate(|w| (w * (1.0 / self.dry_speed)).tanh() * self.dry_torque);
+        let drag = speed.univariate(|w| w * self.viscous + w * w.abs() * self.fan_drag);
         let load = dry + drag;
         let lost = valve * (ahead - pressure) + slip * dp - check * dp
             + (ideal - torque) * speed

@@ -1,5 +1,6 @@
 //! A volume of oil: how its pressure answers to flow (M1.5, M1.6).
 
+use crate::dual::Dual;
 use crate::oil::Oil;
 use crate::real::Real;
 
@@ -34,8 +35,11 @@ impl Chamber {
     /// Rate of pressure in Pa/s from the net inflow in m3/s (M1.6).
     #[inline(always)]
     pub fn pressure_rate<S: Real>(&self, oil: &Oil, pressure: S, net_inflow: S) -> S {
-        let compressibility = oil.compressibility(pressure) + self.wall_compressibility;
-        net_inflow / (compressibility * self.volume)
+        let stiffness = pressure.univariate(|p| {
+            Dual::constant(1.0 / self.volume)
+                / (oil.compressibility_at(p) + self.wall_compressibility)
+        });
+        net_inflow * stiffness
     }
 
     /// Same for a chamber that grows: `extra` (m3) adds to the volume at rest, and the net inflow
@@ -48,7 +52,10 @@ impl Chamber {
         net_inflow: S,
         extra: S,
     ) -> S {
-        let compressibility = oil.compressibility(pressure) + self.wall_compressibility;
-        net_inflow / (compressibility * (extra + self.volume))
+        let stiffness = pressure.bivariate(extra, |p, extra| {
+            let compressibility = oil.compressibility_at(p) + self.wall_compressibility;
+            Dual::constant(1.0) / (compressibility * (extra + self.volume))
+        });
+        net_inflow * stiffness
     }
 }

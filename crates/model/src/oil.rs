@@ -107,6 +107,11 @@ impl Oil {
     /// Rabie, *Fluid Power Engineering*, 2009, eq. 2.50-2.57, with the local air fraction.
     #[inline(always)]
     pub fn compressibility<S: Real>(&self, pressure: S) -> S {
+        pressure.univariate(|p| self.compressibility_at(p))
+    }
+
+    #[inline(always)]
+    pub(crate) fn compressibility_at<S: Real>(&self, pressure: S) -> S {
         let (ratio, absolute) = self.air_ratio(pressure);
         let air = ratio * self.air;
         let volume = pressure * (-1.0 / self.liquid_bulk_modulus) + 1.0 + air;
@@ -131,8 +136,10 @@ impl Oil {
     /// Volume of the aerated oil relative to its volume at 0 gauge, `S(p)` of M1.7.
     #[inline(always)]
     pub fn relative_volume<S: Real>(&self, pressure: S) -> S {
-        let (ratio, _) = self.air_ratio(pressure);
-        (pressure * (-1.0 / self.liquid_bulk_modulus) + 1.0 + ratio * self.air)
-            * (1.0 / (1.0 + self.air))
+        pressure.univariate(|p| {
+            let (ratio, _) = self.air_ratio(p);
+            (p * (-1.0 / self.liquid_bulk_modulus) + 1.0 + ratio * self.air)
+                * (1.0 / (1.0 + self.air))
+        })
     }
 }

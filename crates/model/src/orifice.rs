@@ -95,7 +95,7 @@ impl Orifice {
     pub fn flow<S: Real>(&self, oil: &Oil, dp: S) -> S {
         let transition =
             self.transition_reynolds * oil.kinematic_viscosity / (2.0 * self.hydraulic_diameter);
-        velocity_fixed(dp, transition, self.discharge, oil.density) * self.area
+        dp.univariate(|dp| velocity_fixed(dp, transition, self.discharge, oil.density) * self.area)
     }
 }
 
@@ -112,14 +112,21 @@ impl Edge {
     /// Velocity scale for a round opening of variable area (M2.2); m/s. `area` in m2, `dp` in Pa.
     #[inline(always)]
     pub fn velocity_round<S: Real>(&self, oil: &Oil, area: S, dp: S) -> S {
-        let diameter = (area * (4.0 / std::f64::consts::PI) + OPENING_FLOOR * OPENING_FLOOR).sqrt();
-        self.velocity(oil, diameter, dp)
+        area.bivariate(dp, |area, dp| self.round(oil, area, dp))
     }
 
     /// Velocity scale for a slit of variable gap (M2.2); m/s. `gap` in m, `dp` in Pa.
     #[inline(always)]
     pub fn velocity_slit<S: Real>(&self, oil: &Oil, gap: S, dp: S) -> S {
-        self.velocity(oil, gap * 2.0 + OPENING_FLOOR, dp)
+        gap.bivariate(dp, |gap, dp| {
+            self.velocity(oil, gap * 2.0 + OPENING_FLOOR, dp)
+        })
+    }
+
+    #[inline(always)]
+    fn round<S: Real>(&self, oil: &Oil, area: S, dp: S) -> S {
+        let diameter = (area * (4.0 / std::f64::consts::PI) + OPENING_FLOOR * OPENING_FLOOR).sqrt();
+        self.velocity(oil, diameter, dp)
     }
 
     #[inline(always)]
@@ -132,7 +139,7 @@ impl Edge {
     /// Flow through a round opening of variable area, m3/s.
     #[inline(always)]
     pub fn flow_round<S: Real>(&self, oil: &Oil, area: S, dp: S) -> S {
-        self.velocity_round(oil, area, dp) * area
+        area.bivariate(dp, |area, dp| self.round(oil, area, dp) * area)
     }
 
     /// Flow through a round opening whose area does not change with the states, m3/s.
@@ -140,7 +147,7 @@ impl Edge {
     pub fn flow_given<S: Real>(&self, oil: &Oil, area: f64, dp: S) -> S {
         let diameter = (area * (4.0 / std::f64::consts::PI) + OPENING_FLOOR * OPENING_FLOOR).sqrt();
         let transition = 0.5 * self.transition_reynolds * oil.kinematic_viscosity / diameter;
-        velocity_fixed(dp, transition, self.discharge, oil.density) * area
+        dp.univariate(|dp| velocity_fixed(dp, transition, self.discharge, oil.density) * area)
     }
 
     /// Flow through a check valve (M2.5): the area opens over `opening_pressure` (Pa) and is
@@ -150,7 +157,9 @@ impl Edge {
         if dp.value() <= 0.0 {
             return S::constant(0.0);
         }
-        let open = area * smooth_step(dp * (1.0 / opening_pressure));
-        self.flow_round(oil, open, dp)
+        area.bivariate(dp, |area, dp| {
+            let open = area * smooth_step(dp * (1.0 / opening_pressure));
+            self.round(oil, open, dp) * open
+        })
     }
 }

@@ -186,8 +186,9 @@ impl PriorityValve {
     ) -> ValveFlows<S> {
         let orifice = self.fixed_orifice.flow(oil, p.inlet - p.bore);
 
-        let shut =
-            smooth_step((travel - self.holes_start) * (1.0 / (self.holes_end - self.holes_start)));
+        let shut = travel.univariate(|x| {
+            smooth_step((x - self.holes_start) * (1.0 / (self.holes_end - self.holes_start)))
+        });
         let holes_area = (-shut + 1.0) * self.holes_area + self.holes_leak;
         let holes_velocity = self
             .holes_edge
@@ -199,7 +200,8 @@ impl PriorityValve {
         let land_leak = self.land_leak(travel, land_drop);
 
         let jet = |area: S, v: S, edge: &Edge, cosine: f64| {
-            area * v * v * (oil.density * cosine * self.jet_factor / edge.discharge)
+            let factor = oil.density * cosine * self.jet_factor / edge.discharge;
+            area.bivariate(v, |area, v| area * v * v * factor)
         };
         let transient_jet = if self.damping_length == 0.0 {
             S::constant(0.0)
@@ -236,13 +238,15 @@ impl PriorityValve {
     /// Leakage over the land while it is shut (M5.4), m3/s; fades as it opens.
     #[inline(always)]
     fn land_leak<S: Real>(&self, travel: S, dp: S) -> S {
-        let closed = -travel + self.land.overlap;
-        let fade = smooth_step(-closed * (1.0 / LEAK_WIDTH));
-        if fade.value() >= 1.0 {
+        if travel.value() - self.land.overlap >= LEAK_WIDTH {
             return S::constant(0.0);
         }
-        let length = ramp(closed, LEAK_WIDTH) + LEAK_WIDTH;
-        dp * self.clearance_factor / length * (-fade + 1.0)
+        travel.bivariate(dp, |travel, dp| {
+            let closed = -travel + self.land.overlap;
+            let fade = smooth_step(-closed * (1.0 / LEAK_WIDTH));
+            let length = ramp(closed, LEAK_WIDTH) + LEAK_WIDTH;
+            dp * self.clearance_factor / length * (-fade + 1.0)
+        })
     }
 
     /// Forces on the spool (M5.9, M5.10) at a travel, velocity and bristle deflection.
@@ -262,7 +266,7 @@ impl PriorityValve {
                 coulomb,
                 velocity: width,
             } => (
-                (velocity * (1.0 / width)).tanh() * *coulomb,
+                velocity.univariate(|v| (v * (1.0 / width)).tanh() * *coulomb),
                 S::constant(0.0),
             ),
             Friction::Bristle(law) => law.force(velocity, bristle),

@@ -126,6 +126,11 @@ impl Ripple {
     /// Factor on the mean delivery at a shaft angle in rad; its mean over a turn is 1.
     #[inline(always)]
     pub fn factor<S: Real>(&self, angle: S) -> S {
+        angle.univariate(|angle| self.factor_at(angle))
+    }
+
+    #[inline(always)]
+    fn factor_at<S: Real>(&self, angle: S) -> S {
         match *self {
             Self::None => S::constant(1.0),
             Self::Gear {

@@ -3,6 +3,8 @@
 //! States and everything computed from them are generic; parameters stay `f64`, which is why
 //! mixed operators with `f64` on the right are part of the trait. Write `x * 2.0`.
 
+use crate::dual::Dual;
+
 use std::ops::{Add, AddAssign, Div, DivAssign, Mul, MulAssign, Neg, Sub, SubAssign};
 
 /// A real number that carries its value and, where it is a dual number, its derivatives.
@@ -31,6 +33,30 @@ pub trait Real:
     /// `f(x)` by the chain rule, from the value of `f` and of its derivative at `self.value()`.
     #[must_use]
     fn chain(self, f: f64, df: f64) -> Self;
+
+    /// `f(x, y)` by the chain rule, from the value of `f` and of both partial derivatives.
+    #[must_use]
+    fn chain2(self, other: Self, f: f64, by_self: f64, by_other: f64) -> Self;
+
+    /// A function of this number alone, differentiated once in a narrow dual number instead of in
+    /// every column: what a leaf of the equations should use when it takes several operations.
+    #[inline(always)]
+    #[must_use]
+    fn univariate(self, f: impl FnOnce(Dual<1>) -> Dual<1>) -> Self {
+        let narrow = f(Dual::variable(self.value(), 0));
+        self.chain(narrow.value, narrow.slopes[0])
+    }
+
+    /// Same for a function of two numbers.
+    #[inline(always)]
+    #[must_use]
+    fn bivariate(self, other: Self, f: impl FnOnce(Dual<2>, Dual<2>) -> Dual<2>) -> Self {
+        let narrow = f(
+            Dual::variable(self.value(), 0),
+            Dual::variable(other.value(), 1),
+        );
+        self.chain2(other, narrow.value, narrow.slopes[0], narrow.slopes[1])
+    }
 
     /// Square root; the derivative at 0 is infinite, so call sites keep the argument positive.
     #[inline(always)]
@@ -123,6 +149,11 @@ impl Real for f64 {
 
     #[inline(always)]
     fn chain(self, f: f64, _df: f64) -> Self {
+        f
+    }
+
+    #[inline(always)]
+    fn chain2(self, _other: Self, f: f64, _by_self: f64, _by_other: f64) -> Self {
         f
     }
 }

@@ -34,8 +34,10 @@ impl Relief {
     /// Opening that `dp` asks for, 0 when shut.
     #[inline(always)]
     fn wanted<S: Real>(&self, dp: S) -> S {
-        ramp(dp - self.cracking, self.opening_width)
-            * (1.0 / (self.full_flow_pressure - self.cracking))
+        dp.univariate(|dp| {
+            ramp(dp - self.cracking, self.opening_width)
+                * (1.0 / (self.full_flow_pressure - self.cracking))
+        })
     }
 
     /// Rate of the opening, 1/s, from the opening and the pressure difference in Pa (M6.1).

@@ -82,11 +82,13 @@ impl SteeringUnit {
         ret: S,
     ) -> SteeringFlows<S> {
         let size = deflection.abs();
-        let bypass_area = (-smooth_step(size * (1.0 / self.bypass_shut)) + 1.0) * self.bypass_area
-            + self.bypass_leak;
+        let bypass_area = size.univariate(|d| {
+            (-smooth_step(d * (1.0 / self.bypass_shut)) + 1.0) * self.bypass_area + self.bypass_leak
+        });
         let bypass = self.bypass_edge.flow_round(oil, bypass_area, supply - ret);
-        let open =
-            smooth_step((size - self.dead_band) * (1.0 / (self.full_deflection - self.dead_band)));
+        let open = size.univariate(|d| {
+            smooth_step((d - self.dead_band) * (1.0 / (self.full_deflection - self.dead_band)))
+        });
         let to_a = deflection.value() >= 0.0;
         let (fed, emptied) = if to_a {
             chambers
@@ -125,10 +127,10 @@ impl SteeringUnit {
         if !pushing {
             return S::constant(wheel_rate);
         }
-        let limit = smooth_step(
-            (deflection.abs() - (self.stop_deflection - self.stop_band)) * (1.0 / self.stop_band),
-        );
-        (-limit + 1.0) * wheel_rate
+        deflection.univariate(|d| {
+            let inside = d.abs() - (self.stop_deflection - self.stop_band);
+            (-smooth_step(inside * (1.0 / self.stop_band)) + 1.0) * wheel_rate
+        })
     }
 
     /// Flow that a wheel rate (rad/s) asks for, m3/s.
