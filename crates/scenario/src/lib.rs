@@ -6,6 +6,7 @@ mod finding;
 mod nearest;
 pub mod quantity_text;
 pub mod units;
+pub mod write;
 
 pub use error::{FileError, MAX_FILE_BYTES};
 pub use finding::{Finding, Findings, Severity};

@@ -17,10 +17,15 @@ impl fmt::Display for Place {
     }
 }
 
+/// Bytes between two counts of characters: what one place costs, even in a file of one huge line.
+const BLOCK: usize = 1024;
+
 /// Where the lines of a text begin, so that many places cost little.
 #[derive(Debug, Clone, PartialEq, Eq)]
 pub(crate) struct Lines {
     starts: Vec<usize>,
+    /// Characters that begin before each block.
+    counts: Vec<usize>,
 }
 
 impl Lines {
@@ -29,7 +34,13 @@ impl Lines {
         let starts = std::iter::once(0)
             .chain(after_breaks.map(|(at, _)| at + 1))
             .collect();
-        Self { starts }
+        let mut counts = vec![0];
+        let mut total = 0;
+        for block in text.as_bytes().chunks(BLOCK) {
+            total += beginnings(block);
+            counts.push(total);
+        }
+        Self { starts, counts }
     }
 
     /// The place of a byte of `text`; beyond its end, the place right behind it.
@@ -40,16 +51,16 @@ impl Lines {
             .get(line.saturating_sub(1))
             .copied()
             .unwrap_or(0);
-        let rest = text.get(start..).unwrap_or("");
-        // Counted, not sliced: an offset inside a character must not panic.
-        let before = rest
-            .char_indices()
-            .take_while(|(at, _)| start + at < offset)
-            .count();
-        Place {
-            line,
-            column: before + 1,
-        }
+        let column = self.characters(text, offset) - self.characters(text, start) + 1;
+        Place { line, column }
+    }
+
+    /// Number of characters that begin before `offset`.
+    fn characters(&self, text: &str, offset: usize) -> usize {
+        let offset = offset.min(text.len());
+        let block = offset / BLOCK;
+        let counted = self.counts.get(block).copied().unwrap_or(0);
+        counted + beginnings(&text.as_bytes()[block * BLOCK..offset])
     }
 
     /// The byte at a place; a place beyond a line gives the end of the text.
@@ -62,6 +73,11 @@ impl Lines {
             .nth(place.column.saturating_sub(1))
             .map_or(text.len(), |(at, _)| start + at)
     }
+}
+
+/// Bytes that begin a character: in UTF-8 all but those of the form 10xxxxxx.
+fn beginnings(bytes: &[u8]) -> usize {
+    bytes.iter().filter(|byte| **byte & 0xc0 != 0x80).count()
 }
 
 #[cfg(test)]
@@ -103,6 +119,27 @@ mod tests {
             lines.offset(text, Place { line: 9, column: 1 }),
             text.len(),
             "no such line"
+        );
+    }
+
+    #[test]
+    fn long_lines_count_right_across_blocks() {
+        let text = format!("x\n{}", "aµ€".repeat(2000));
+        let lines = Lines::of(&text);
+        for (column, (at, _)) in text[2..].char_indices().enumerate() {
+            let place = Place {
+                line: 2,
+                column: column + 1,
+            };
+            assert_eq!(lines.place(&text, at + 2), place, "byte {at}");
+        }
+        assert_eq!(
+            lines.place(&text, text.len()),
+            Place {
+                line: 2,
+                column: 6001
+            },
+            "the end"
         );
     }
 }
