@@ -55,6 +55,9 @@ pub trait Recorder {
     fn step(&mut self, step: &mut Step<'_>) -> Result<Flow, GiveUp>;
 }
 
+/// Writes the state at a time within the present step.
+type Interpolant<'a> = dyn FnMut(f64, &mut [f64]) -> Result<(), DiffsolError> + 'a;
+
 /// An accepted step.
 pub struct Step<'a> {
     /// Start of the step, s.
@@ -63,7 +66,7 @@ pub struct Step<'a> {
     pub time: f64,
     /// State at the end.
     pub y: &'a [f64],
-    interpolant: &'a mut dyn FnMut(f64, &mut [f64]) -> Result<(), DiffsolError>,
+    interpolant: &'a mut Interpolant<'a>,
 }
 
 impl Step<'_> {
@@ -114,7 +117,7 @@ pub fn integrate(
     check_start(first.system, start)?;
     let mut previous = from;
     for piece in pieces {
-        if !(piece.end > previous) {
+        if piece.end.is_nan() || piece.end <= previous {
             return Err(SimError::Span {
                 start: from,
                 end: last.end,
@@ -184,7 +187,7 @@ struct Reached {
 }
 
 impl Reached {
-    fn accept(&mut self, state: StateRef<'_, Vect>, order: usize) {
+    fn accept(&mut self, state: &StateRef<'_, Vect>, order: usize) {
         self.time = state.t;
         self.state.copy_from_slice(state.y.inner().as_slice());
         let orders = &mut self.statistics.steps_by_order;
@@ -205,14 +208,10 @@ fn gave_up(equations: &Equations<'_>, reached: &Reached, reason: GiveUp) -> RunE
     let size = system.size();
     let mut rates = vec![0.0; size];
     system.derivatives(reached.time, &reached.state, &mut rates);
-    let (index, reason) = match (equations.not_finite.get(), &reason) {
-        (Some(place), GiveUp::StepTooSmall { .. } | GiveUp::Newton { .. })
-        | (Some(place), GiveUp::Solver { .. } | GiveUp::Accuracy { .. })
-            // An infinity tried and left long ago is not what stopped the run.
-            if place.time >= reached.time =>
-        {
-            (place.state, GiveUp::NotFinite)
-        }
+    let stuck = !matches!(reason, GiveUp::TooManySteps { .. } | GiveUp::Crawl { .. });
+    let (index, reason) = match equations.not_finite.get() {
+        // An infinity tried and left long ago is not what stopped the run.
+        Some(place) if stuck && place.time >= reached.time => (place.state, GiveUp::NotFinite),
         _ => {
             let pace = |i: usize| rates[i].abs() / (reached.state[i].abs() + system.scales()[i]);
             let fastest = (0..size).max_by(|&a, &b| pace(a).total_cmp(&pace(b)));
@@ -241,6 +240,12 @@ impl<'d, 's> Drive<'d, 's, '_> {
         let problem = self.problem;
         let setup = |error: DiffsolError| SimError::Setup(error.to_string());
         self.reached.statistics.starts = 1;
+        let mut rates = vec![0.0; self.reached.state.len()];
+        let equations = &problem.eqn;
+        equations.evaluate(self.reached.time, &self.reached.state, &mut rates);
+        if equations.not_finite.get().is_some() {
+            return Ok(Outcome::GaveUp(GiveUp::NotFinite));
+        }
         match self.options.method {
             Method::Bdf => {
                 let state = BdfState::new(problem, 1).map_err(setup)?;
@@ -293,7 +298,7 @@ impl<'d, 's> Drive<'d, 's, '_> {
                 }
             };
             let from = self.reached.time;
-            self.reached.accept(solver.state(), solver.order());
+            self.reached.accept(&solver.state(), solver.order());
             count(solver.get_statistics(), self.reached);
             let solver = &*solver;
             let mut step = Step {

@@ -95,76 +95,71 @@ impl SolverOptions {
     ///
     /// # Errors
     /// [`SimError::Option`] names the first option outside its range.
+    #[allow(clippy::too_many_lines, reason = "a table of ranges")]
     pub fn check(&self) -> Result<(), SimError> {
-        let within = |option, value: f64, low: f64, high: f64, allowed| {
-            if value >= low && value <= high {
-                Ok(())
-            } else {
-                Err(SimError::Option {
+        let any = f64::MAX;
+        let grid = self.output_step.unwrap_or(1.0);
+        let ranges = [
+            (
+                "relative_tolerance",
+                self.relative_tolerance,
+                1e-12,
+                1e-2,
+                "1e-12 to 0.01",
+            ),
+            (
+                "nonlinear_tolerance",
+                self.nonlinear_tolerance,
+                1e-6,
+                1.0,
+                "1e-6 to 1",
+            ),
+            (
+                "min_step",
+                self.min_step,
+                f64::EPSILON,
+                1e-3,
+                "2.3e-16 s to 1e-3 s",
+            ),
+            (
+                "initial_step",
+                self.initial_step,
+                1e-12,
+                1.0,
+                "1e-12 s to 1 s",
+            ),
+            (
+                "crawl_advance",
+                self.crawl_advance,
+                0.0,
+                any,
+                "not negative",
+            ),
+            (
+                "highest_order",
+                self.highest_order as f64,
+                1.0,
+                5.0,
+                "1 to 5",
+            ),
+            ("max_steps", self.max_steps as f64, 1.0, any, "at least 1"),
+            (
+                "crawl_steps",
+                self.crawl_steps as f64,
+                100.0,
+                any,
+                "at least 100",
+            ),
+            ("output_step", grid, 1e-9, any, "at least 1e-9 s"),
+        ];
+        for (option, value, low, high, allowed) in ranges {
+            if !(low..=high).contains(&value) {
+                return Err(SimError::Option {
                     option,
                     value,
                     allowed,
-                })
+                });
             }
-        };
-        within(
-            "relative_tolerance",
-            self.relative_tolerance,
-            1e-12,
-            1e-2,
-            "1e-12 to 0.01",
-        )?;
-        within(
-            "nonlinear_tolerance",
-            self.nonlinear_tolerance,
-            1e-6,
-            1.0,
-            "1e-6 to 1",
-        )?;
-        within(
-            "min_step",
-            self.min_step,
-            f64::EPSILON,
-            1e-3,
-            "2.3e-16 s to 1e-3 s",
-        )?;
-        within(
-            "initial_step",
-            self.initial_step,
-            1e-12,
-            1.0,
-            "1e-12 s to 1 s",
-        )?;
-        within(
-            "crawl_advance",
-            self.crawl_advance,
-            0.0,
-            f64::MAX,
-            "not negative",
-        )?;
-        within(
-            "highest_order",
-            self.highest_order as f64,
-            1.0,
-            5.0,
-            "1 to 5",
-        )?;
-        within(
-            "max_steps",
-            self.max_steps as f64,
-            1.0,
-            f64::MAX,
-            "at least 1",
-        )?;
-        within(
-            "crawl_steps",
-            self.crawl_steps as f64,
-            100.0,
-            f64::MAX,
-            "at least 100",
-        )?;
-        if let Some(step) = self.output_step {
-            within("output_step", step, 1e-9, f64::MAX, "at least 1e-9 s")?;
         }
         Ok(())
     }

@@ -14,17 +14,20 @@ use crate::watch::Watch;
 /// a run of 10 s nothing moves by more than a hundred-thousandth of its size.
 pub const REST_RESIDUAL: f64 = 1e-6;
 
-/// The search from a state in motion is tried once no rate exceeds this, 1/s.
-const NEARLY_AT_REST: f64 = 1e-2;
+/// The wait may end once no state has moved by more than [`QUIET_CHANGE`] of its typical size
+/// over this time, s. Rates themselves say little while waiting: the errors of a loose tolerance
+/// make stiff pressures look fast.
+const QUIET_TIME: f64 = 0.1;
 
-/// Motion that is still faster than this (1/s) when the wait is over has not died out.
-const STILL_MOVING: f64 = 1e-1;
+/// See [`QUIET_TIME`].
+const QUIET_CHANGE: f64 = 1e-3;
+
+/// Motion has died out if the equilibrium lies this near to where the wait ended, in sizes of the
+/// states.
+const NEAR: f64 = 2e-2;
 
 /// Relative tolerance of the wait: only its end counts, and the search corrects that.
 const WAIT_TOLERANCE: f64 = 1e-4;
-
-/// Steps between two looks at the residual.
-const STEPS_PER_LOOK: usize = 8;
 
 /// How to look for a state of rest.
 #[derive(Debug, Clone, PartialEq)]
@@ -85,7 +88,7 @@ impl std::fmt::Display for Settled {
             ..
         } = self;
         match self.rest {
-            Rest::DiedOut => write!(f, "at rest after {waited:.3} s"),
+            Rest::DiedOut => write!(f, "at rest, motion died out within {waited:.3} s"),
             Rest::FromGuess => write!(f, "at rest, solved in {iterations} iterations"),
             Rest::SolvedOnly => write!(
                 f,
@@ -142,20 +145,19 @@ pub fn settle(
         steps: 0,
     };
     // First up to where motion has nearly died out; if the search fails from there, to the end.
-    for look in [Some(NEARLY_AT_REST), None] {
-        if wait(&resting, &mut settled, look, options, watch)? {
+    for stop_when_quiet in [true, false] {
+        if wait(&resting, &mut settled, stop_when_quiet, options, watch)? {
             return Ok(settled);
         }
     }
     Ok(settled)
 }
 
-/// Integrates on, until the residual is at most `look` or the wait is over, and searches from
-/// there. Says whether that is the end of it.
+/// Integrates on and searches from there. Says whether that is the end of it.
 fn wait(
     system: &dyn System,
     settled: &mut Settled,
-    look: Option<f64>,
+    stop_when_quiet: bool,
     options: &SettleOptions,
     watch: &mut Watch<'_>,
 ) -> Result<bool, SimError> {
@@ -168,12 +170,12 @@ fn wait(
         max_steps: options.max_steps,
         ..SolverOptions::with_tolerance(WAIT_TOLERANCE)
     };
-    let mut watcher = RestWatcher {
-        system,
-        rates: vec![0.0; system.size()],
-        residual: f64::INFINITY,
-        stop_at: look,
-        steps: 0,
+    let mut watcher = QuietWatcher {
+        scales: system.scales(),
+        stop_when_quiet,
+        since: settled.waited,
+        mark: settled.state.clone(),
+        change: 0.0,
     };
     let start = settled.state.clone();
     let result = integrate(
@@ -187,43 +189,60 @@ fn wait(
     settled.state = result.state;
     settled.waited = result.time;
     settled.steps += result.statistics.steps;
-    settled.residual = residual(system, 0.0, &settled.state, &mut watcher.rates);
-    let died_out = settled.residual < STILL_MOVING;
+    settled.residual = residual(system, 0.0, &settled.state, &mut vec![0.0; system.size()]);
     let found = search(system, 0.0, &settled.state, REST_RESIDUAL);
     settled.iterations += found.iterations;
     if found.converged {
-        settled.state = found.state;
-        settled.residual = found.residual;
-        settled.rest = if died_out {
+        let away = largest_change(system.scales(), &settled.state, &found.state);
+        settled.rest = if away < NEAR {
             Rest::DiedOut
         } else {
             Rest::SolvedOnly
         };
+        settled.state = found.state;
+        settled.residual = found.residual;
     }
     let over = settled.waited >= options.wait || !result.end.is_finished();
     Ok(found.converged || over)
 }
 
-/// Ends the wait once nothing moves fast any more.
-struct RestWatcher<'a> {
-    system: &'a dyn System,
-    rates: Vec<f64>,
-    residual: f64,
-    stop_at: Option<f64>,
-    steps: usize,
+/// Largest difference of two states, in sizes of the states.
+fn largest_change(scales: &[f64], a: &[f64], b: &[f64]) -> f64 {
+    a.iter()
+        .zip(b)
+        .zip(scales)
+        .map(|((a, b), scale)| ((a - b) / scale).abs())
+        .fold(0.0, f64::max)
 }
 
-impl Recorder for RestWatcher<'_> {
+/// Ends the wait once nothing moves much any more.
+struct QuietWatcher<'a> {
+    scales: &'a [f64],
+    stop_when_quiet: bool,
+    /// Start of the window looked at, s, and the state there.
+    since: f64,
+    mark: Vec<f64>,
+    /// Largest change from it.
+    change: f64,
+}
+
+impl Recorder for QuietWatcher<'_> {
     fn begin(&mut self, _piece: usize, _time: f64, _y: &[f64]) {}
 
     fn step(&mut self, step: &mut Step<'_>) -> Result<Flow, GiveUp> {
-        self.steps += 1;
-        let Some(stop_at) = self.stop_at.filter(|_| self.steps % STEPS_PER_LOOK == 0) else {
+        if !self.stop_when_quiet {
             return Ok(Flow::Continue);
-        };
-        self.residual = residual(self.system, 0.0, step.y, &mut self.rates);
-        if self.residual <= stop_at {
-            return Ok(Flow::Stop);
+        }
+        self.change = self
+            .change
+            .max(largest_change(self.scales, &self.mark, step.y));
+        if step.time - self.since >= QUIET_TIME {
+            if self.change < QUIET_CHANGE {
+                return Ok(Flow::Stop);
+            }
+            self.since = step.time;
+            self.mark.copy_from_slice(step.y);
+            self.change = 0.0;
         }
         Ok(Flow::Continue)
     }

@@ -37,7 +37,7 @@ impl<'a> Watch<'a> {
     /// Reports the time reached and says whether the run shall stop.
     pub(crate) fn cancelled_at(&mut self, time: f64) -> bool {
         self.steps += 1;
-        if self.steps % STEPS_PER_REPORT == 0
+        if self.steps.is_multiple_of(STEPS_PER_REPORT)
             && let Some(report) = self.progress.as_mut()
         {
             report(time);
