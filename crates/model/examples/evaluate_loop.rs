@@ -9,7 +9,10 @@ mod fixture;
 fn main() {
     let mut arguments = std::env::args().skip(1);
     let what = arguments.next().unwrap_or_else(|| "rhs".to_owned());
-    let count: usize = arguments.next().and_then(|n| n.parse().ok()).unwrap_or(1000);
+    let count: usize = arguments
+        .next()
+        .and_then(|n| n.parse().ok())
+        .unwrap_or(1000);
     let circuit = Circuit::new(fixture::orchard()).expect("the fixture is a circuit");
     let n = circuit.state_count();
     let mut dice = fixture::Dice(1);

@@ -69,6 +69,7 @@ impl<const N: usize> Sub for Dual<N> {
 impl<const N: usize> Mul for Dual<N> {
     type Output = Self;
     #[inline(always)]
+    #[allow(clippy::suspicious_arithmetic_impl, reason = "the product rule adds")]
     fn mul(self, other: Self) -> Self {
         let (x, y) = (self.value, other.value);
         self.zip(other, x * y, |a, b| a * y + b * x)

@@ -115,7 +115,7 @@ impl Circuit {
         let ix = &self.layout;
         let oil = &self.parts.oil;
         let valve = &self.parts.valve;
-        let (x, v) = (y[ix.x], y[ix.v]);
+        let x = y[ix.x];
         let p = SpoolPressures {
             inlet: y[ix.p_in],
             bore: y[ix.p_b],
@@ -124,43 +124,18 @@ impl Circuit {
             priority: y[ix.p_c],
             excess: y[ix.p_e],
         };
-        let q = valve.flows(oil, x, v, &p);
+        let q = valve.flows(oil, x, y[ix.v], &p);
         let mut relieved = S::constant(0.0);
         if let Some(relief) = &self.parts.main_relief {
             o.put(Signal::MainReliefOpening, y[ix.y_main]);
             relieved = self.relieve(relief, ix.y_main, p.inlet - ret, y, dy, o, sums);
             o.put(Signal::MainReliefFlow, relieved);
         }
-        let mut priority_relieved = S::constant(0.0);
-        let mut pilot = S::constant(0.0);
-        match &self.parts.priority_relief {
-            PriorityRelief::None => {}
-            PriorityRelief::OnPort(relief) => {
-                priority_relieved =
-                    self.relieve(relief, ix.y_pri, p.priority - ret, y, dy, o, sums);
-                o.put(Signal::PriorityReliefFlow, priority_relieved);
-                o.put(Signal::PriorityReliefOpening, y[ix.y_pri]);
-            }
-            PriorityRelief::Pilot(relief) => {
-                pilot = self.relieve(relief, ix.y_pri, p.spring - ret, y, dy, o, sums);
-                o.put(Signal::PilotReliefFlow, pilot);
-                o.put(Signal::PriorityReliefOpening, y[ix.y_pri]);
-            }
-        }
+        let (priority_relieved, pilot) = self.evaluate_priority_relief(y, dy, o, &p, ret, sums);
+        self.evaluate_spool(y, dy, o, &p, &q);
 
-        let bristle = if valve.friction.has_state() {
-            y[ix.bristle]
-        } else {
-            S::constant(0.0)
-        };
-        let f = valve.forces(x, v, bristle, &p, &q);
-        if valve.friction.has_state() {
-            dy[ix.bristle] = f.bristle_rate;
-        }
-        let displaced = v * valve.end_area();
+        let displaced = y[ix.v] * valve.end_area();
         let swept = x * valve.end_area();
-        dy[ix.x] = v;
-        dy[ix.v] = f.sum * (1.0 / valve.mass);
         dy[ix.p_h] =
             valve
                 .head
@@ -180,6 +155,64 @@ impl Circuit {
             pumped - q.orifice - q.excess - q.head - q.head_leak - relieved,
         );
         observe_valve(o, &p, &q);
+        (q.holes - q.spring_leak - priority_relieved, q.excess)
+    }
+
+    /// Relief of the steering side; gives its flow from the priority port and from the spring
+    /// end, m3/s.
+    #[inline(always)]
+    fn evaluate_priority_relief<S: Real, O: Observer<S>>(
+        &self,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        p: &SpoolPressures<S>,
+        ret: S,
+        sums: &mut Sums<S>,
+    ) -> (S, S) {
+        let at = self.layout.y_pri;
+        let none = S::constant(0.0);
+        match &self.parts.priority_relief {
+            PriorityRelief::None => (none, none),
+            PriorityRelief::OnPort(relief) => {
+                let flow = self.relieve(relief, at, p.priority - ret, y, dy, o, sums);
+                o.put(Signal::PriorityReliefFlow, flow);
+                o.put(Signal::PriorityReliefOpening, y[at]);
+                (flow, none)
+            }
+            PriorityRelief::Pilot(relief) => {
+                let flow = self.relieve(relief, at, p.spring - ret, y, dy, o, sums);
+                o.put(Signal::PilotReliefFlow, flow);
+                o.put(Signal::PriorityReliefOpening, y[at]);
+                (none, flow)
+            }
+        }
+    }
+
+    /// Motion of the spool.
+    #[inline(always)]
+    fn evaluate_spool<S: Real, O: Observer<S>>(
+        &self,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        p: &SpoolPressures<S>,
+        q: &ValveFlows<S>,
+    ) {
+        let ix = &self.layout;
+        let valve = &self.parts.valve;
+        let (x, v) = (y[ix.x], y[ix.v]);
+        let bristle = if valve.friction.has_state() {
+            y[ix.bristle]
+        } else {
+            S::constant(0.0)
+        };
+        let f = valve.forces(x, v, bristle, p, q);
+        if valve.friction.has_state() {
+            dy[ix.bristle] = f.bristle_rate;
+        }
+        dy[ix.x] = v;
+        dy[ix.v] = f.sum * (1.0 / valve.mass);
         o.put(Signal::EndPressureForce, f.ends);
         o.put(Signal::SpringForce, f.spring);
         o.put(Signal::SpoolFriction, f.friction);
@@ -194,7 +227,6 @@ impl Circuit {
             Signal::FrictionLoss,
             valve.mechanical_loss(x, v, bristle, &f),
         );
-        (q.holes - q.spring_leak - priority_relieved, q.excess)
     }
 
     /// One relief valve into the return; gives its flow, m3/s.

@@ -128,7 +128,6 @@ impl Circuit {
     ) -> S {
         let ix = &self.layout;
         let oil = &self.parts.oil;
-        let cylinder = &gear.cylinder;
         let u = command.clamp(-1.0, 1.0);
         let p_e = y[ix.p_e];
         let (p_cap, p_rod) = (y[ix.p_cap], y[ix.p_rod]);
@@ -160,19 +159,47 @@ impl Circuit {
         } else {
             (-returned, supplied)
         };
+        self.evaluate_lift_cylinder(y, dy, o, gear, in_cap + suction_cap, in_rod + suction_rod);
+        sums.to_return += neutral + returned - suction_cap - suction_rod;
+        o.add(
+            Signal::ConsumerLoss,
+            neutral * (p_e - ret)
+                + supplied * (p_e - fed)
+                + returned * (emptied - ret)
+                + suction_cap * (ret - p_cap)
+                + suction_rod * (ret - p_rod),
+        );
+        neutral + supplied
+    }
+
+    /// Cylinder of the lift, from the net inflows of its chambers.
+    #[inline(always)]
+    fn evaluate_lift_cylinder<S: Real, O: Observer<S>>(
+        &self,
+        y: &[S],
+        dy: &mut [S],
+        o: &mut O,
+        gear: &LiftGear,
+        in_cap: S,
+        in_rod: S,
+    ) {
+        let ix = &self.layout;
+        let oil = &self.parts.oil;
+        let cylinder = &gear.cylinder;
+        let (p_cap, p_rod) = (y[ix.p_cap], y[ix.p_rod]);
         let (travel, velocity) = (y[ix.y_l], y[ix.v_l]);
         let leak = (p_cap - p_rod) * cylinder.piston_leak;
         let (area_a, area_b) = (cylinder.area_a, cylinder.area_b);
         dy[ix.p_cap] = cylinder.chamber_a().pressure_rate_moving(
             oil,
             p_cap,
-            in_cap + suction_cap - leak - velocity * area_a,
+            in_cap - leak - velocity * area_a,
             travel * area_a,
         );
         dy[ix.p_rod] = cylinder.chamber_b().pressure_rate_moving(
             oil,
             p_rod,
-            in_rod + suction_rod + leak + velocity * area_b,
+            in_rod + leak + velocity * area_b,
             travel * -area_b,
         );
         let oil_force = p_cap * area_a - p_rod * area_b;
@@ -182,23 +209,13 @@ impl Circuit {
         let stops = cylinder.stop_force(travel, velocity);
         dy[ix.y_l] = velocity;
         dy[ix.v_l] = (oil_force - gear.load - dry - drag + stops) * (1.0 / cylinder.mass);
-        sums.to_return += neutral + returned - suction_cap - suction_rod;
-        o.put(Signal::LiftFlow, in_cap + suction_cap);
+        o.put(Signal::LiftFlow, in_cap);
         o.put(Signal::LiftForce, oil_force);
-        o.add(
-            Signal::ConsumerLoss,
-            neutral * (p_e - ret)
-                + supplied * (p_e - fed)
-                + returned * (emptied - ret)
-                + suction_cap * (ret - p_cap)
-                + suction_rod * (ret - p_rod)
-                + leak * (p_cap - p_rod),
-        );
+        o.add(Signal::ConsumerLoss, leak * (p_cap - p_rod));
         o.add(
             Signal::FrictionLoss,
             (dry + drag) * velocity + cylinder.stop_loss(travel, velocity),
         );
         o.add(Signal::WorkOut, velocity * gear.load);
-        neutral + supplied
     }
 }

@@ -8,6 +8,7 @@ use crate::parts::{BenchThrottle, SteeringGear, SteeringSide};
 use crate::profile::{Input, Inputs};
 use crate::real::Real;
 use crate::signal::{Observer, Signal};
+use crate::steering_unit::{SteeringFlows, SteeringUnit};
 
 impl Circuit {
     /// Priority port, line, and what it feeds; `inflow` is what the valve puts into the port.
@@ -190,22 +191,13 @@ impl Circuit {
                 + (leak_a + shock_a - suction_a) * (p_a - ret)
                 + (leak_b + shock_b - suction_b) * (p_b - ret),
         );
-        let signed = if u.to_a { u.metered } else { -u.metered };
-        o.put(Signal::WheelRate, S::constant(wheel));
-        o.put(Signal::WheelRateEffective, u.wheel_reached);
-        o.put(Signal::WheelShortfall, -u.wheel_reached + wheel);
-        o.put(Signal::NeutralBypassFlow, u.bypass);
-        o.put(Signal::MeterFlow, signed);
-        o.put(Signal::SteeringDemand, S::constant(unit.demand(wheel)));
-        o.put(Signal::SteeringReturnFlow, u.returned);
         o.put(Signal::SteeringUnitLeakage, supply_leak + leak_a + leak_b);
         o.put(Signal::SuctionCheckFlow, suction_a + suction_b);
         if gear.shock_relief.is_some() {
             o.put(Signal::ShockReliefFlow, shock_a + shock_b);
         }
-        o.put(Signal::BypassArea, u.bypass_area);
-        o.put(Signal::MeterArea, u.supply_area);
         o.put(Signal::SteeringLoadPressure, p_a - p_b);
+        observe_unit(o, unit, wheel, &u);
         u.bypass + u.metered + supply_leak
     }
 
@@ -277,4 +269,24 @@ impl Circuit {
         );
         o.add(Signal::WorkOut, velocity * external);
     }
+}
+
+/// What the steering unit does, for people.
+#[inline(always)]
+fn observe_unit<S: Real, O: Observer<S>>(
+    o: &mut O,
+    unit: &SteeringUnit,
+    wheel: f64,
+    u: &SteeringFlows<S>,
+) {
+    let signed = if u.to_a { u.metered } else { -u.metered };
+    o.put(Signal::WheelRate, S::constant(wheel));
+    o.put(Signal::WheelRateEffective, u.wheel_reached);
+    o.put(Signal::WheelShortfall, -u.wheel_reached + wheel);
+    o.put(Signal::NeutralBypassFlow, u.bypass);
+    o.put(Signal::MeterFlow, signed);
+    o.put(Signal::SteeringDemand, S::constant(unit.demand(wheel)));
+    o.put(Signal::SteeringReturnFlow, u.returned);
+    o.put(Signal::BypassArea, u.bypass_area);
+    o.put(Signal::MeterArea, u.supply_area);
 }

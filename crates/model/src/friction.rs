@@ -33,11 +33,11 @@ pub struct Bristle {
     pub breakaway: f64,
     /// Stribeck velocity, m/s, positive.
     pub stribeck_velocity: f64,
-    /// Bristle stiffness sigma_0, N/m, positive.
+    /// Bristle stiffness `sigma_0`, N/m, positive.
     pub stiffness: f64,
-    /// Bristle damping sigma_1, N s/m.
+    /// Bristle damping `sigma_1`, N s/m.
     pub damping: f64,
-    /// Viscous coefficient sigma_2, N s/m.
+    /// Viscous coefficient `sigma_2`, N s/m.
     pub viscous: f64,
 }
 

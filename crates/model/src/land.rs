@@ -13,10 +13,6 @@ const OPENING_WIDTH: f64 = 5e-6;
 /// Width over which one stretch of the edge hands over to the next, m (M5.3).
 const HANDOVER_WIDTH: f64 = 20e-6;
 
-/// Sharpness of the limit set by the port behind the land (M5.3): an eighth-power mean keeps the
-/// area exact near zero, where a square-root soft minimum would go negative.
-const PORT_POWER: i32 = 8;
-
 /// The shape of the metering edge.
 #[derive(Debug, Clone, PartialEq)]
 pub enum LandShape {
@@ -100,12 +96,9 @@ impl MeteringLand {
         let r2 = ratio * ratio;
         let r4 = r2 * r2;
         let base = r4 * r4 + 1.0;
-        // base^(-1/8), three square roots instead of a power.
+        // The port limits the area by an eighth-power mean, exact near zero, where a square-root
+        // soft minimum would go negative. base^(-1/8): three square roots instead of a power.
         let root = S::constant(1.0) / base.sqrt().sqrt().sqrt();
-        debug_assert!(
-            PORT_POWER == 8,
-            "the roots above are those of the eighth power"
-        );
         Opening {
             area: raw.area * root,
             slope: raw.slope * root / base,

@@ -115,6 +115,10 @@ impl PriorityLine {
 
 /// What the priority port feeds (M7).
 #[derive(Debug, Clone, Copy, PartialEq)]
+#[allow(
+    clippy::large_enum_variant,
+    reason = "one a circuit, read in every evaluation"
+)]
 pub enum SteeringSide {
     /// A throttle behind a check valve into a given pressure; area and pressure are inputs.
     Bench(BenchThrottle),

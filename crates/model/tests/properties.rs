@@ -204,12 +204,8 @@ fn states_beyond_any_sense_stay_finite() {
             c.derivatives(&inputs, &y, &mut dy);
             let mut jac = vec![0.0; n * n];
             c.jacobian(&inputs, &y, &mut jac);
-            for i in 0..n {
-                assert!(
-                    dy[i].is_finite(),
-                    "{name}: rate of {} at {y:?}",
-                    c.states()[i].name
-                );
+            for (rate, state) in dy.iter().zip(c.states()) {
+                assert!(rate.is_finite(), "{name}: rate of {} at {y:?}", state.name);
             }
             assert!(
                 jac.iter().all(|j| j.is_finite()),
