@@ -1,7 +1,7 @@
 //! What can go wrong before or beside a run. A run that the solver gives up is not an error but
 //! an ending: see [`crate::RunEnd`].
 
-use std::path::PathBuf;
+use helmsplit_scenario::FileError;
 
 /// Why a run could not start or its result could not be written.
 #[derive(Debug, thiserror::Error)]
@@ -49,12 +49,10 @@ pub enum SimError {
     /// The solver refused the problem as posed.
     #[error("the solver refused the problem: {0}")]
     Setup(String),
+    /// A result could not be put into the format of its file.
+    #[error("a result does not fit its file: {0}")]
+    Format(#[source] std::io::Error),
     /// A result file could not be written.
-    #[error("cannot write {}: {source}", path.display())]
-    Write {
-        /// The file.
-        path: PathBuf,
-        /// What the system said.
-        source: std::io::Error,
-    },
+    #[error(transparent)]
+    Write(#[from] FileError),
 }

@@ -15,6 +15,7 @@
 
 mod audit;
 mod circuit_system;
+mod csv_export;
 mod ending;
 mod error;
 mod extremes;
@@ -26,6 +27,7 @@ mod quadrature;
 mod recorder;
 mod run;
 mod settle;
+mod sidecar;
 mod statistics;
 mod system;
 mod table;
@@ -34,6 +36,7 @@ mod watch;
 
 pub use audit::{Audit, Balance};
 pub use circuit_system::{CircuitOnSegment, state_scales};
+pub use csv_export::{Rows, column_heading, write_csv};
 pub use ending::{GiveUp, RunEnd};
 pub use error::SimError;
 pub use extremes::Extreme;
@@ -41,6 +44,7 @@ pub use integrate::{Flow, Integration, Piece, Recorder, Step, integrate};
 pub use options::{Method, SolverOptions};
 pub use run::{RunResult, RunSetup, Start, run};
 pub use settle::{REST_RESIDUAL, Rest, SettleOptions, Settled, settle};
+pub use sidecar::{Origin, Sidecar};
 pub use statistics::Statistics;
 pub use system::System;
 pub use table::{Column, Table};

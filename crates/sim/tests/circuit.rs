@@ -6,7 +6,11 @@ mod fixture;
 mod manoeuvre;
 
 use helmsplit_model::{Circuit, Input, InputProfiles, Profile, Signal};
-use helmsplit_sim::{Method, Rest, RunResult, RunSetup, SolverOptions, Start, Watch, run};
+use helmsplit_scenario::units::UnitSystem;
+use helmsplit_sim::{
+    Method, Origin, Rest, Rows, RunResult, RunSetup, Sidecar, SolverOptions, Start, Watch, run,
+    write_csv,
+};
 use manoeuvre::{carrier_manoeuvre, rad_per_s};
 
 fn carrier() -> Circuit {
@@ -300,4 +304,59 @@ fn same_input_same_result() {
         assert_eq!(a.trace, b.trace, "{method:?}: traces");
         assert_eq!(a.statistics, b.statistics, "{method:?}: counts");
     }
+}
+
+#[test]
+fn exported_files_hold_the_run() {
+    let (circuit, inputs) = (carrier(), jump_of_the_wheel());
+    let options = SolverOptions {
+        output_step: Some(0.01),
+        ..SolverOptions::default()
+    };
+    let r = solve_with(&circuit, &inputs, 1.0, &Start::Settled, &options);
+    let folder = tempfile::tempdir().unwrap();
+    let (table, note) = (
+        folder.path().join("run.csv"),
+        folder.path().join("run.json"),
+    );
+    write_csv(&table, &r.trace, Rows::Grid, UnitSystem::Metric).unwrap();
+    let text = std::fs::read_to_string(&table).unwrap();
+    let mut lines = text.lines();
+    let headings: Vec<&str> = lines.next().unwrap().split(',').collect();
+    let at = headings.iter().position(|h| *h == "p_in_bar").unwrap();
+    let grid = r.trace.grid().unwrap();
+    let position = r.trace.position("p_in").unwrap();
+    let mut rows = 0;
+    for (line, value) in lines.zip(grid.column(position).iter()) {
+        let bar: f64 = line.split(',').nth(at).unwrap().parse().unwrap();
+        assert!(
+            (bar * 1e5 - value).abs() <= 1e-8 * value.abs(),
+            "row {rows}: {bar} bar"
+        );
+        rows += 1;
+    }
+    assert_eq!(rows, grid.len(), "rows");
+
+    let origin = Origin {
+        circuit: "orchard carrier",
+        circuit_hash: "00",
+        version: "0.1.0",
+    };
+    let sidecar = Sidecar::new(origin, &r, &options, UnitSystem::Metric);
+    sidecar.write(&note).unwrap();
+    let json: serde_json::Value =
+        serde_json::from_str(&std::fs::read_to_string(&note).unwrap()).unwrap();
+    assert_eq!(json["end"]["kind"], "finished", "{json}");
+    assert_eq!(
+        json["columns"].as_array().unwrap().len() + 1,
+        headings.len(),
+        "columns"
+    );
+    assert!(
+        json["audit"]["energy"]["relative"].as_f64().unwrap() < 1e-5,
+        "{json}"
+    );
+    let largest = json["columns"][position]["max"].as_f64().unwrap();
+    let expected = r.trace.extreme(position).unwrap().max / 1e5;
+    assert!((largest - expected).abs() < 1e-9, "{largest} bar");
 }
