@@ -1,6 +1,8 @@
 //! What can go wrong before or beside a run. A run that the solver gives up is not an error but
 //! an ending: see [`crate::RunEnd`].
 
+use std::path::PathBuf;
+
 use helmsplit_scenario::FileError;
 
 /// Why a run could not start or its result could not be written.
@@ -41,10 +43,32 @@ pub enum SimError {
         allowed: &'static str,
     },
     /// The circuit has no such state or signal.
-    #[error("no trace is named \"{name}\"")]
+    #[error("the circuit has no state or signal named \"{name}\"")]
     UnknownColumn {
         /// The name asked for.
         name: String,
+    },
+    /// A saved state does not hold every state of the circuit.
+    #[error("the saved state has no value for \"{state}\"")]
+    SavedStateLacks {
+        /// Name of the state.
+        state: String,
+    },
+    /// A file could not be read.
+    #[error("cannot read {}: {source}", path.display())]
+    Read {
+        /// The file.
+        path: PathBuf,
+        /// What the system said.
+        source: std::io::Error,
+    },
+    /// A file is not a saved state.
+    #[error("{} is not a saved state: {message}", path.display())]
+    NoSavedState {
+        /// The file.
+        path: PathBuf,
+        /// What is wrong.
+        message: String,
     },
     /// The solver refused the problem as posed.
     #[error("the solver refused the problem: {0}")]

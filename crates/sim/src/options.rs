@@ -1,5 +1,7 @@
 //! How a run is solved.
 
+use helmsplit_scenario::SolverSettings;
+use helmsplit_scenario::choice::SolverMethod;
 use serde::{Deserialize, Serialize};
 
 use crate::error::SimError;
@@ -77,6 +79,30 @@ impl Default for SolverOptions {
             output_step: None,
             audit: true,
             keep_solver_steps: true,
+        }
+    }
+}
+
+impl From<&SolverSettings> for SolverOptions {
+    /// What a circuit file says, with the output grid it asks for; its duration is not an option
+    /// of the solver.
+    fn from(settings: &SolverSettings) -> Self {
+        let &SolverSettings {
+            relative_tolerance,
+            output_step,
+            max_steps,
+            method,
+            duration: _,
+        } = settings;
+        Self {
+            relative_tolerance,
+            output_step: Some(output_step),
+            max_steps,
+            method: match method {
+                SolverMethod::Bdf => Method::Bdf,
+                SolverMethod::Esdirk34 => Method::Esdirk34,
+            },
+            ..Self::default()
         }
     }
 }

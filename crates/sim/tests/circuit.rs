@@ -8,8 +8,8 @@ mod manoeuvre;
 use helmsplit_model::{Circuit, Input, InputProfiles, Profile, Signal};
 use helmsplit_scenario::units::UnitSystem;
 use helmsplit_sim::{
-    Method, Origin, Rest, Rows, RunResult, RunSetup, Sidecar, SolverOptions, Start, Watch, run,
-    write_csv,
+    Method, Origin, Rest, Rows, RunResult, RunSetup, SavedState, Sidecar, SolverOptions, Start,
+    Watch, run, write_csv,
 };
 use manoeuvre::{carrier_manoeuvre, rad_per_s};
 
@@ -271,7 +271,19 @@ fn a_run_goes_on_from_a_saved_state() {
     let (circuit, inputs) = (carrier(), jump_of_the_wheel());
     let whole = solve(&circuit, &inputs, 0.8, &Start::Cold);
     let part = solve(&circuit, &inputs, 0.4, &Start::Cold);
-    let start = Start::From(part.final_state);
+    let folder = tempfile::tempdir().unwrap();
+    let path = folder.path().join("state.json");
+    let saved = SavedState::at_end_of(&part, &circuit);
+    saved.write(&path).unwrap();
+    let read = SavedState::read(&path).unwrap();
+    assert_eq!(read, saved, "a saved state reads back bit for bit");
+    let start = read.start(&circuit).unwrap();
+    let other = fixture::variants().swap_remove(2).1;
+    assert!(
+        read.start(&Circuit::new(other).unwrap()).is_err(),
+        "another circuit"
+    );
+    assert!(SavedState::read(folder.path()).is_err(), "a folder");
     let setup = RunSetup {
         circuit: &circuit,
         inputs: &inputs,
