@@ -113,25 +113,26 @@ impl Value {
     }
 }
 
-/// A range in words: `above 0 mm, up to 50 mm`.
+/// A range in words: `above 0, up to 50 mm`.
 pub(crate) fn range_text(range: &Range, unit: &Unit) -> String {
     let number = |value: f64| {
         // Limits of the table are short decimals: what `Display` prints is what was typed.
-        let tiny = value != 0.0 && !(1e-4..1e7).contains(&value.abs());
-        let number = if tiny {
+        let odd = value != 0.0 && !(1e-4..1e6).contains(&value.abs());
+        if odd {
             format!("{value:e}")
         } else {
             format!("{value}")
-        };
-        if unit.is_bare() {
-            number
-        } else {
-            format!("{number} {unit}")
         }
     };
-    if range.low_open {
-        format!("above {}, up to {}", number(range.low), number(range.high))
+    let (low, high) = (number(range.low), number(range.high));
+    let space = if unit.is_bare() {
+        String::new()
     } else {
-        format!("{} to {}", number(range.low), number(range.high))
+        format!(" {unit}")
+    };
+    if range.low_open {
+        format!("above {low}, up to {high}{space}")
+    } else {
+        format!("{low} to {high}{space}")
     }
 }

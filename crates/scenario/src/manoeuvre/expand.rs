@@ -66,45 +66,19 @@ fn breakpoints(template: &TemplateUse, base: f64) -> Vec<(f64, f64)> {
     let at = get("at");
     match template.kind {
         TemplateKind::WheelStep => pulse(at, base, &[(get("rate"), get("turn"))], get("ramp")),
-        TemplateKind::WheelReversal => {
-            let (rate, turn, ramp) = (get("rate"), get("turn"), get("ramp"));
-            vec![
-                (at, base),
-                (at + ramp, rate),
-                (at + turn, rate),
-                (at + turn + 2.0 * ramp, -rate),
-                (at + 2.0 * turn + ramp, -rate),
-                (at + 2.0 * turn + 2.0 * ramp, base),
-            ]
-        }
+        TemplateKind::WheelReversal => reversal(template, at, base),
         TemplateKind::SlowLockToLock => lock_to_lock(template, at, base),
         TemplateKind::HoldAtLock => {
             let stages = [(get("rate"), get("to_lock")), (get("pull"), get("hold"))];
             pulse(at, base, &stages, get("ramp"))
         }
-        TemplateKind::SineSteering => {
-            let (rate, period) = (get("rate"), get("period"));
-            let (cycles, points) = (get("cycles"), get("points"));
-            let count = (cycles * points) as usize;
-            (0..=count)
-                .map(|i| {
-                    let part = i as f64 / points;
-                    // Whole and half swings are exactly at the base.
-                    let swing = if i * 2 % (points as usize) == 0 {
-                        0.0
-                    } else {
-                        (TAU * part).sin()
-                    };
-                    (at + part * period, base + rate * swing)
-                })
-                .collect()
-        }
+        TemplateKind::SineSteering => sine(template, at, base),
         TemplateKind::EngineRunUp | TemplateKind::LugDown => {
             vec![(at, base), (at + get("ramp"), get("to"))]
         }
         TemplateKind::ConsumerOn => vec![(at, base), (at + get("ramp"), get("command"))],
         TemplateKind::ConsumerOff => vec![(at, base), (at + get("ramp"), 0.0)],
-        TemplateKind::PortBlocked => pulse(at, base, &[(0.0, get("for"))], get("ramp")),
+        TemplateKind::PortBlocked => pulse(at, base, &[(0.0, get("hold"))], get("ramp")),
         TemplateKind::KerbStrike => {
             let top = at + get("rise");
             let end = top + get("hold");
@@ -127,6 +101,38 @@ fn breakpoints(template: &TemplateUse, base: f64) -> Vec<(f64, f64)> {
             ]
         }
     }
+}
+
+/// One way, then at once the other way.
+fn reversal(template: &TemplateUse, at: f64, base: f64) -> Vec<(f64, f64)> {
+    let get = |name: &str| template.si(name).unwrap_or(f64::NAN);
+    let (rate, turn, ramp) = (get("rate"), get("turn"), get("ramp"));
+    vec![
+        (at, base),
+        (at + ramp, rate),
+        (at + turn, rate),
+        (at + turn + 2.0 * ramp, -rate),
+        (at + 2.0 * turn + ramp, -rate),
+        (at + 2.0 * turn + 2.0 * ramp, base),
+    ]
+}
+
+/// Swings about the base in straight pieces.
+fn sine(template: &TemplateUse, at: f64, base: f64) -> Vec<(f64, f64)> {
+    let get = |name: &str| template.si(name).unwrap_or(f64::NAN);
+    let (rate, period) = (get("rate"), get("period"));
+    let (cycles, points) = (get("cycles") as usize, get("points") as usize);
+    let point = |i: usize| {
+        let share = i as f64 / points as f64;
+        // Whole and half swings are exactly at the base.
+        let swing = if (i * 2).is_multiple_of(points) {
+            0.0
+        } else {
+            (TAU * share).sin()
+        };
+        (at + share * period, base + rate * swing)
+    };
+    (0..=cycles * points).map(point).collect()
 }
 
 /// From the base through stages of (value, time from one ramp to the next), back to the base.

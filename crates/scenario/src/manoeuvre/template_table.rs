@@ -128,7 +128,7 @@ templates! {
     ];
     PortBlocked "excess port blocked" "Excess port blocked" drives ExcessCommand,
     "Shuts the excess consumer off suddenly and opens it again.", [
-        row("for", "Blocked for", Time, "1 s", over(0.0, 3600.0), "Time until it opens again."),
+        row("hold", "Blocked for", Time, "1 s", over(0.0, 3600.0), "Time until it opens again."),
         row("ramp", "Ramp", Time, "5 ms", over(0.0, 60_000.0), "Time of shutting and opening."),
     ];
     KerbStrike "kerb strike" "Kerb strike" drives ExternalForce,

@@ -119,6 +119,9 @@ impl ParameterId {
     }
 }
 
+/// Number of parameters.
+pub const COUNT: usize = solver::END as usize;
+
 /// Every parameter, in the order of the circuit file.
 #[must_use]
 pub fn parameters() -> &'static [&'static Parameter] {
@@ -209,6 +212,7 @@ mod tests {
 
     #[test]
     fn ids_are_places_and_paths_are_unique() {
+        assert_eq!(parameters().len(), COUNT, "no section is left out");
         for (place, row) in parameters().iter().enumerate() {
             assert_eq!(row.id.index(), place, "{} stands in its place", row.path);
             assert_eq!(

@@ -46,7 +46,7 @@ rows! { "pump" from super::oil::END;
         within(500.0, 1500.0), usual(820.0, 930.0), WEAR_FACTOR,
         "Density of the oil at the point of the data sheet.",
         "M4.2";
-    WEAR "wear" "Wear factor" "wear" Ratio "1",
+    WEAR "wear" "Wear factor" "" Ratio "1",
         within(1.0, 100.0), usual(1.0, 10.0), WEAR_FACTOR,
         "Multiplies the slip: 1 is a new pump, 3 a pump well used.",
         "M4.2";
