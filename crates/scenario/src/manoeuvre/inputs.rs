@@ -1,5 +1,7 @@
 //! The inputs that a manoeuvre drives.
 
+use std::sync::LazyLock;
+
 use helmsplit_model::{Input, Quantity};
 
 use crate::finding::Finding;
@@ -113,17 +115,25 @@ impl InputRow {
     /// Its preferred metric unit.
     #[must_use]
     pub fn unit(&self) -> &'static Unit {
-        quantity_text::parse(self.default, self.quantity)
-            .map_or_else(|_| si_unit(self.quantity), |parsed| parsed.unit)
+        LEVELS[self.input as usize].1
     }
 
     /// Its level where nothing moves it, SI.
     #[must_use]
     pub fn level(&self) -> f64 {
-        // A test holds that every default reads.
-        quantity_text::parse(self.default, self.quantity).map_or(0.0, |parsed| parsed.si)
+        LEVELS[self.input as usize].0
     }
 }
+
+/// Level in SI and its unit, for each input.
+static LEVELS: LazyLock<[(f64, &'static Unit); Input::ALL.len()]> = LazyLock::new(|| {
+    std::array::from_fn(|place| {
+        let row = &INPUTS[place];
+        quantity_text::parse(row.default, row.quantity)
+            .map(|parsed| (parsed.si, parsed.unit))
+            .unwrap_or_else(|error| unreachable!("level of {}: {error}", row.path))
+    })
+});
 
 /// The row of an input.
 #[must_use]
