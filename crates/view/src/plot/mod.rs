@@ -10,6 +10,6 @@ mod ticks;
 pub use axis::Axis;
 pub use decimate::{decimate, straighten};
 pub use figure::{Figure, Limit, Mark, Panel, Reach, Shade, TimeAxis, ValueRange, Where};
-pub use number::{MINUS, NARROW_SPACE, number_text, superscript};
+pub use number::{MINUS, NARROW_SPACE, number_text, power_text, superscript};
 pub use series::Series;
 pub use ticks::Ticks;

@@ -48,6 +48,21 @@ pub fn number_text(value: f64, places: usize) -> String {
     text
 }
 
+/// A number with one digit behind the point and a power of ten, as `2.1×10⁻⁹`. Zero and what is
+/// not finite are as in [`number_text`].
+#[must_use]
+pub fn power_text(value: f64) -> String {
+    let scientific = format!("{value:.1e}");
+    let parts = scientific.split_once('e');
+    let parts = parts.and_then(|(lead, power)| Some((lead.parse().ok()?, power.parse().ok()?)));
+    match parts {
+        Some((lead, power)) if value != 0.0 => {
+            format!("{}×10{}", number_text(lead, 1), superscript(power))
+        }
+        _ => number_text(value, 0),
+    }
+}
+
 /// A whole number in superscript digits, as `⁻³`.
 #[must_use]
 pub fn superscript(number: i32) -> String {
@@ -85,6 +100,18 @@ mod tests {
                 text,
                 "{value} to {places} places"
             );
+        }
+    }
+
+    #[test]
+    fn powers_of_ten() {
+        for (value, text) in [
+            (2.14e-9, "2.1×10⁻⁹"),
+            (-9.96e7, "\u{2212}1.0×10⁸"),
+            (0.0, "0"),
+            (f64::NAN, "\u{2013}"),
+        ] {
+            assert_eq!(power_text(value), text, "{value:e}");
         }
     }
 

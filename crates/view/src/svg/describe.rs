@@ -2,7 +2,7 @@
 
 use std::fmt::Write as _;
 
-use crate::plot::{Figure, number_text};
+use crate::plot::{Figure, number_text, power_text};
 
 /// Significant digits of the values in the description.
 const DIGITS: i32 = 3;
@@ -62,7 +62,7 @@ fn rounded(value: f64) -> String {
     }
     let power = value.abs().log10().floor() as i32;
     if !(-4..9).contains(&power) {
-        return format!("{value:.2e}");
+        return power_text(value);
     }
     number_text(value, usize::try_from(DIGITS - 1 - power).unwrap_or(0))
 }
