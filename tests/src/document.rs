@@ -151,7 +151,7 @@ fn deviation(outcome: &Outcome) -> String {
         let bound = 10f64.powi(floor.log10().ceil() as i32);
         format!("< {}{}", shortest(bound), unit.trim_end())
     } else {
-        format!("{}{}", significant(size, 1), unit.trim_end())
+        format!("{}{}", significant(size, 2), unit.trim_end())
     }
 }
 
@@ -200,7 +200,7 @@ mod tests {
         ] {
             assert_eq!(significant(number, 6), text, "{number}");
         }
-        assert_eq!(significant(0.000_23, 1), "2e-4", "one digit");
+        assert_eq!(significant(0.000_234, 2), "2.3e-4", "two digits");
     }
 
     #[test]
