@@ -20,6 +20,11 @@ const AIR_FLOOR: f64 = 200.0;
 /// vacuum instead of running negative.
 const VACUUM_BAND: f64 = 1000.0;
 
+/// Least volume of the oil relative to 0 gauge inside the stiffness. The linear law of the liquid
+/// would reach zero at a pressure of one bulk modulus; a circuit without relief, or a wild trial of
+/// the solver, must find stiff oil there and not the far side of a pole.
+const LEAST_VOLUME: f64 = 0.2;
+
 /// What stays of the stiffness at vacuum, relative (M1.4).
 const VACUUM_REST: f64 = 1e-6;
 
@@ -114,7 +119,8 @@ impl Oil {
     pub(crate) fn compressibility_at<S: Real>(&self, pressure: S) -> S {
         let (ratio, absolute) = self.air_ratio(pressure);
         let air = ratio * self.air;
-        let volume = pressure * (-1.0 / self.liquid_bulk_modulus) + 1.0 + air;
+        let volume =
+            (pressure * (-1.0 / self.liquid_bulk_modulus) + 1.0 + air).max_with(LEAST_VOLUME);
         let slope =
             air / absolute * (1.0 / self.polytropic_exponent) + 1.0 / self.liquid_bulk_modulus;
         let p_abs = pressure + ATMOSPHERE;

@@ -196,7 +196,9 @@ impl GovernedEngine {
     /// Torque at a set speed and a speed in rad/s (M4.6), N m.
     #[inline(always)]
     pub fn torque<S: Real>(&self, set_speed: f64, speed: S) -> S {
-        let demand = (-speed + set_speed) * (1.0 / (self.droop * set_speed));
+        // At a set speed of zero the governor shuts off instead of dividing by nothing.
+        let span = self.droop * set_speed.max(LEAST_SET_SPEED);
+        let demand = (-speed + set_speed) * (1.0 / span);
         demand.max_with(0.0).min_with(1.0) * self.full_torque
     }
 
@@ -208,6 +210,9 @@ impl GovernedEngine {
         (self.torque(set_speed, speed) - pump_torque - other) * (1.0 / self.inertia)
     }
 }
+
+/// Set speed below which the droop is no longer a share of it, rad/s.
+const LEAST_SET_SPEED: f64 = 1.0;
 
 /// Speed below which other consumers let go of a stalling engine, rad/s (about 50 rpm): without
 /// it a stalled engine would be driven backwards by a load that only exists while it turns.

@@ -10,19 +10,6 @@ use crate::checks::check_run;
 use crate::error::StudyError;
 use crate::event::{Event, events};
 
-/// Where the run of a scenario starts, if not where the scenario says.
-#[derive(Debug, Clone, PartialEq, Default)]
-pub enum SolveStart {
-    /// As the scenario says. "From state" takes the state from [`SolveStart::State`] instead: a
-    /// file is the caller's to read.
-    #[default]
-    Scenario,
-    /// Settled at the first inputs, looked for from this state first.
-    Near(Vec<f64>),
-    /// In this state, SI, in the order of the circuit's states.
-    State(Vec<f64>),
-}
-
 /// A scenario, solved.
 #[derive(Debug, Clone)]
 pub struct Solved {
@@ -62,25 +49,26 @@ pub fn options_of(scenario: &Scenario) -> SolverOptions {
     }
 }
 
-/// Solves a scenario over its manoeuvre and checks the run.
+/// Solves a scenario over its manoeuvre and checks the run. `start` replaces the start that the
+/// scenario names; a saved state is always handed over this way, since reading files is the
+/// caller's.
 ///
 /// # Errors
 /// [`StudyError::Scenario`] with every finding if it is no circuit; [`StudyError::Sim`] if the
 /// start state does not fit. A run that ended early is a result: see its `end`.
 pub fn solve(
     scenario: &Scenario,
-    start: &SolveStart,
+    start: Option<Start>,
     options: &SolverOptions,
     watch: &mut Watch<'_>,
 ) -> Result<Solved, StudyError> {
     let circuit = scenario.circuit().map_err(StudyError::Scenario)?;
     let inputs = scenario.inputs().map_err(StudyError::Scenario)?;
     let start = match (start, scenario.chosen::<StartKind>()) {
-        (SolveStart::State(state), _) => Start::From(state.clone()),
-        (SolveStart::Near(state), _) => Start::SettledNear(state.clone()),
-        (SolveStart::Scenario, StartKind::Cold) => Start::Cold,
-        (SolveStart::Scenario, StartKind::Settled) => Start::Settled,
-        (SolveStart::Scenario, StartKind::FromState) => return Err(StudyError::StateNotGiven),
+        (Some(start), _) => start,
+        (None, StartKind::Cold) => Start::Cold,
+        (None, StartKind::Settled) => Start::Settled,
+        (None, StartKind::FromState) => return Err(StudyError::StateNotGiven),
     };
     let run = run(
         &RunSetup {

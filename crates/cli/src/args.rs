@@ -1,0 +1,182 @@
+//! The arguments.
+
+use std::path::PathBuf;
+
+use clap::{Args, Parser, Subcommand, ValueEnum};
+use helmsplit_scenario::UnitSystem;
+use helmsplit_sim::Rows;
+use helmsplit_view::BuiltInTheme;
+
+const CAUTIONS: &str = "\
+Steering is safety-critical. Results support, never replace, tests on the machine, the maker's
+instructions, local codes and standards, and licensed or competent practice. Oil under pressure
+injects through skin: never feel for leaks. Release stored energy before opening a line.
+
+Exit status: 0 done and all checks pass, 1 a check fails, 2 bad input, 3 the solver gave up,
+130 cancelled.";
+
+/// Simulates steering circuits with a priority flow control valve.
+///
+/// Without a command it solves FILE, or the built-in orchard carrier, and writes traces and a
+/// figure to the folder helmsplit-out.
+#[derive(Debug, Parser)]
+#[command(name = "helmsplit", version, after_help = CAUTIONS, args_conflicts_with_subcommands = true)]
+pub(crate) struct Arguments {
+    #[command(subcommand)]
+    pub(crate) command: Option<Command>,
+    /// Circuit file, or the name of a preset
+    pub(crate) file: Option<PathBuf>,
+}
+
+#[derive(Debug, Subcommand)]
+pub(crate) enum Command {
+    /// Solve a circuit over its manoeuvre; print the verdict table, write traces and a figure
+    Run(RunArguments),
+    /// Solve a circuit and print every check with its evidence; writes nothing
+    Check(CheckArguments),
+    /// Write a commented circuit file from a preset
+    New(NewArguments),
+    /// List or search the parameters of a circuit file
+    Parameters(ParameterArguments),
+    /// Rewrite a circuit file in another unit system
+    Convert(ConvertArguments),
+    /// Print completions for a shell
+    Completions {
+        /// The shell
+        shell: clap_complete::Shell,
+    },
+    /// Print the manual page
+    Man,
+}
+
+/// The circuit and what is changed in it.
+#[derive(Debug, Args)]
+pub(crate) struct CircuitArguments {
+    /// Circuit file, or the name of a preset
+    pub(crate) file: PathBuf,
+    /// Set a value: valve.fixed_orifice_diameter="3.5 mm", excess.kind="tank"; may be repeated
+    #[arg(long = "set", value_name = "PATH=VALUE")]
+    pub(crate) set: Vec<String>,
+    /// Start the run from: settled, cold, or a state file written by --save-state
+    #[arg(long, value_name = "START")]
+    pub(crate) start: Option<String>,
+    /// Units of everything that is printed or written
+    #[arg(long, default_value = "metric", value_name = "SYSTEM", value_parser = unit_system)]
+    pub(crate) units: UnitSystem,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct RunArguments {
+    #[command(flatten)]
+    pub(crate) circuit: CircuitArguments,
+    /// Folder for traces, sidecar and figure
+    #[arg(short, long, value_name = "FOLDER", default_value = "helmsplit-out")]
+    pub(crate) out: PathBuf,
+    /// Write no files
+    #[arg(long, conflicts_with = "out")]
+    pub(crate) no_files: bool,
+    /// Which rows the traces have
+    #[arg(long, value_enum, default_value_t = RowChoice::Grid)]
+    pub(crate) rows: RowChoice,
+    /// Colours of the figure
+    #[arg(long, value_enum, default_value_t = Colours::Light)]
+    pub(crate) theme: Colours,
+    /// Write the last state to a file that a later run can start from
+    #[arg(long, value_name = "FILE")]
+    pub(crate) save_state: Option<PathBuf>,
+    /// Print JSON instead of a table
+    #[arg(long)]
+    pub(crate) json: bool,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum RowChoice {
+    /// One row each solver.output_step
+    Grid,
+    /// One row each step of the solver
+    Steps,
+}
+
+impl RowChoice {
+    pub(crate) fn rows(self) -> Rows {
+        match self {
+            Self::Grid => Rows::Grid,
+            Self::Steps => Rows::Steps,
+        }
+    }
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum Colours {
+    /// Dark on light
+    Light,
+    /// Light on dark
+    Dark,
+    /// Without large tinted areas, for paper
+    Print,
+}
+
+impl Colours {
+    pub(crate) fn theme(self) -> BuiltInTheme {
+        match self {
+            Self::Light => BuiltInTheme::Light,
+            Self::Dark => BuiltInTheme::Dark,
+            Self::Print => BuiltInTheme::Print,
+        }
+    }
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct CheckArguments {
+    #[command(flatten)]
+    pub(crate) circuit: CircuitArguments,
+    /// Print JSON instead of text
+    #[arg(long)]
+    pub(crate) json: bool,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct NewArguments {
+    /// Name of the preset; without one the presets are listed
+    pub(crate) preset: Option<String>,
+    /// File to write; by default the preset's name in the current folder
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: Option<PathBuf>,
+    /// Units of the file
+    #[arg(long, default_value = "metric", value_name = "SYSTEM", value_parser = unit_system)]
+    pub(crate) units: UnitSystem,
+    /// Overwrite a file that is there
+    #[arg(long)]
+    pub(crate) force: bool,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct ParameterArguments {
+    /// Words to search in path, label, symbol and note
+    pub(crate) search: Vec<String>,
+    /// Units of ranges and defaults
+    #[arg(long, default_value = "metric", value_name = "SYSTEM", value_parser = unit_system)]
+    pub(crate) units: UnitSystem,
+    /// Print JSON instead of text
+    #[arg(long)]
+    pub(crate) json: bool,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct ConvertArguments {
+    /// Circuit file
+    pub(crate) file: PathBuf,
+    /// The unit system to write
+    #[arg(long, value_name = "SYSTEM", value_parser = unit_system)]
+    pub(crate) to: UnitSystem,
+    /// File to write; by default the result is printed
+    #[arg(short, long, value_name = "FILE", conflicts_with = "in_place")]
+    pub(crate) output: Option<PathBuf>,
+    /// Overwrite the circuit file itself
+    #[arg(long)]
+    pub(crate) in_place: bool,
+}
+
+fn unit_system(text: &str) -> Result<UnitSystem, String> {
+    UnitSystem::from_name(text).ok_or_else(|| "write metric, us or si".to_owned())
+}
