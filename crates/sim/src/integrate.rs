@@ -8,20 +8,19 @@ use std::panic::{AssertUnwindSafe, catch_unwind};
 use diffsol::error::OdeSolverError;
 use diffsol::ode_solver::OdeSolverStatistics;
 use diffsol::{
-    BdfState, DiffsolError, NalgebraLU, OdeSolverMethod, OdeSolverProblem, OdeSolverState,
+    Bdf, BdfState, DiffsolError, OdeSolverMethod, OdeSolverProblem, OdeSolverState,
     OdeSolverStopReason, Op, RkState, StateRef, StateRefMut, Vector, VectorCommon,
 };
 
 use crate::ending::{GiveUp, RunEnd};
 use crate::error::SimError;
+use crate::history::History;
+use crate::lu_solver::LuSolver;
 use crate::options::{Method, SolverOptions};
 use crate::problem::{Equations, Vect, problem};
 use crate::statistics::Statistics;
 use crate::system::System;
 use crate::watch::Watch;
-
-/// Solver of the linear equations.
-type Lu = NalgebraLU<f64>;
 
 /// A stretch of time on which one system holds.
 #[derive(Clone, Copy)]
@@ -248,13 +247,17 @@ impl<'d, 's> Drive<'d, 's, '_> {
         }
         match self.options.method {
             Method::Bdf => {
-                let state = BdfState::new(problem, 1).map_err(setup)?;
-                let solver = problem.bdf_solver::<Lu>(state).map_err(setup)?;
+                let order = self.options.highest_order;
+                let state = History::with_highest_order(order, || {
+                    BdfState::<Vect, History>::new(problem, 1).map_err(setup)
+                })?;
+                let solver = Bdf::<_, _, History>::new(problem, state, LuSolver::default())
+                    .map_err(setup)?;
                 Ok(self.all_pieces(solver, 1))
             }
             Method::Esdirk34 => {
                 let state = RkState::new(problem, 3).map_err(setup)?;
-                let solver = problem.esdirk34_solver::<Lu>(state).map_err(setup)?;
+                let solver = problem.esdirk34_solver::<LuSolver>(state).map_err(setup)?;
                 Ok(self.all_pieces(solver, 3))
             }
         }

@@ -48,9 +48,10 @@ pub struct SolverOptions {
     pub max_newton_failures: usize,
     /// Most failures of the error test within one step. Default 40.
     pub max_error_failures: usize,
-    /// Highest order of [`Method::Bdf`], 1 to 5. Default 5. Orders 4 and 5 are unstable for
+    /// Highest order of [`Method::Bdf`], 1 to 5. Default 3. Orders 4 and 5 are unstable for
     /// lightly damped fast oscillations (Hairer & Wanner, Solving Ordinary Differential
-    /// Equations II, section V.1) and follow them with short steps.
+    /// Equations II, section V.1) and follow a spool's with short steps; smooth problems without
+    /// such oscillations gain from them.
     pub highest_order: usize,
     /// The method.
     pub method: Method,
@@ -74,7 +75,7 @@ impl Default for SolverOptions {
             crawl_advance: 1e-6,
             max_newton_failures: 20,
             max_error_failures: 40,
-            highest_order: 5,
+            highest_order: 3,
             method: Method::Bdf,
             output_step: None,
             audit: true,

@@ -14,6 +14,10 @@ use crate::watch::Watch;
 /// a run of 10 s nothing moves by more than a hundred-thousandth of its size.
 pub const REST_RESIDUAL: f64 = 1e-6;
 
+/// Highest order of the wait. Above 2 the method itself keeps the spool's fast oscillation on
+/// trapped oil alive at a loose tolerance, and takes ten times the steps.
+const WAIT_ORDER: usize = 2;
+
 /// The wait may end once no state has moved by more than [`QUIET_CHANGE`] of its typical size
 /// over this time, s. Rates themselves say little while waiting: the errors of a loose tolerance
 /// make stiff pressures look fast.
@@ -110,6 +114,9 @@ impl std::fmt::Display for Settled {
 /// the system is integrated from the guess or else from `cold`, for up to [`SettleOptions::wait`],
 /// and the equilibrium is solved for from where it comes to.
 ///
+/// The wait runs at a loose tolerance, which may hide a faint hunt: that a state is at rest does
+/// not say that it is stable. The modes of the equilibrium say so.
+///
 /// # Errors
 /// [`SimError`] if the start does not fit the system.
 pub fn settle(
@@ -168,6 +175,7 @@ fn wait(
     };
     let solver = SolverOptions {
         max_steps: options.max_steps,
+        highest_order: WAIT_ORDER,
         ..SolverOptions::with_tolerance(WAIT_TOLERANCE)
     };
     let mut watcher = QuietWatcher {

@@ -231,6 +231,7 @@ const OREGONATOR_END: [f64; 3] = [
 fn all_problems(method: Method, limits: [(f64, usize); 4]) {
     let with = |relative_tolerance: f64| SolverOptions {
         method,
+        highest_order: 5,
         ..SolverOptions::with_tolerance(relative_tolerance)
     };
     let r = run(&Robertson, &[1.0, 0.0, 0.0], 1e11, &with(limits[0].0));
@@ -258,4 +259,30 @@ fn bdf_meets_the_published_end_values() {
 fn esdirk_meets_the_published_end_values() {
     let limits = [(1e-6, 1020), (1e-7, 850), (1e-6, 1480), (1e-7, 3400)];
     all_problems(Method::Esdirk34, limits);
+}
+
+#[test]
+fn the_order_stays_below_its_cap() {
+    let steps_by_order = |highest_order: usize| {
+        let options = SolverOptions {
+            highest_order,
+            ..SolverOptions::default()
+        };
+        let r = run(&Oregonator, &[1.0, 2.0, 3.0], 360.0, &options);
+        let deviation = largest_deviation(&r.state, &OREGONATOR_END);
+        assert!(
+            deviation < 2e-3,
+            "order {highest_order}: off by {deviation:.1e}"
+        );
+        r.statistics.steps_by_order
+    };
+    for highest_order in 2..=5 {
+        let counts = steps_by_order(highest_order);
+        assert!(
+            counts[highest_order - 1] > 0,
+            "order {highest_order} is used: {counts:?}"
+        );
+        let above: usize = counts[highest_order..].iter().sum();
+        assert_eq!(above, 0, "nothing above order {highest_order}: {counts:?}");
+    }
 }
