@@ -113,13 +113,13 @@ pub(super) fn peak_pressure(subject: &Subject<'_>) -> Check {
         .states()
         .iter()
         .find(|s| s.name == name)
-        .map_or_else(|| name.to_owned(), |s| s.label.to_lowercase());
+        .map_or_else(|| name.to_owned(), |s| s.label.clone());
     let evidence = Evidence {
         time: Some(time),
         column: Some(name.to_owned()),
         formula: "highest pressure / rating, the worst of all rated points",
         operands: vec![
-            operand(&format!("highest {label}"), peak, Quantity::Pressure),
+            operand("highest pressure", peak, Quantity::Pressure),
             operand("rating", rating, Quantity::Pressure),
         ],
         source: "the makers' ratings as entered",
