@@ -66,15 +66,8 @@ pub fn events(circuit: &Circuit, trace: &Trace) -> Vec<Event> {
     let mut found = Vec::new();
     let times = trace.steps().times();
     let mut watch = |kind: EventKind, on: &dyn Fn(usize) -> bool| {
-        let mut last_on = f64::NEG_INFINITY;
-        for (row, &time) in times.iter().enumerate() {
-            if on(row) {
-                if time - last_on > QUIET {
-                    found.push(Event { time, kind });
-                }
-                last_on = time;
-            }
-        }
+        let begun = onsets(times, on).into_iter();
+        found.extend(begun.map(|time| Event { time, kind }));
     };
     for (signal, kind) in [
         (Signal::MainReliefOpening, EventKind::MainReliefCracked),
@@ -108,4 +101,45 @@ pub fn events(circuit: &Circuit, trace: &Trace) -> Vec<Event> {
     }
     found.sort_by(|a, b| a.time.total_cmp(&b.time));
     found
+}
+
+/// The times at which a condition comes on after having been off for longer than [`QUIET`]. How
+/// far apart the steps are while it stays on does not matter.
+fn onsets(times: &[f64], on: &dyn Fn(usize) -> bool) -> Vec<f64> {
+    let mut begun = Vec::new();
+    let mut was_on = false;
+    let mut last_on = f64::NEG_INFINITY;
+    for (row, &time) in times.iter().enumerate() {
+        let is_on = on(row);
+        if is_on && !was_on && time - last_on > QUIET {
+            begun.push(time);
+        }
+        if is_on {
+            last_on = time;
+        }
+        was_on = is_on;
+    }
+    begun
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn a_condition_that_stays_on_over_long_steps_is_one_event() {
+        let times = [0.0, 0.1, 0.2, 0.9, 1.6, 1.7, 1.71, 1.72, 2.5, 2.6];
+        let on = [
+            false, true, true, true, true, false, true, false, false, true,
+        ];
+        let begun = onsets(&times, &|row| on[row]);
+        // Off for 0.11 s before 1.71 s and for 0.88 s before 2.6 s.
+        assert_eq!(begun, [0.1, 1.71, 2.6], "each time it came on");
+        let chatter = [0.0, 0.01, 0.02, 0.03, 0.04];
+        assert_eq!(
+            onsets(&chatter, &|row| row % 2 == 1),
+            [0.01],
+            "chatter is one event"
+        );
+    }
 }
