@@ -67,6 +67,15 @@ impl<'a> Columns<'a> {
         Some(Series::new(label, meaning, points))
     }
 
+    /// The size of a column without its sign.
+    pub(super) fn size(&self, label: &str, meaning: Meaning, name: &str) -> Option<Series> {
+        let mut series = self.series(label, meaning, name)?;
+        for point in &mut series.points {
+            point[1] = point[1].abs();
+        }
+        Some(series)
+    }
+
     /// A panel with one solid line that has the panel's name, if the circuit has it; zero is in
     /// view.
     pub(super) fn single(&self, label: &str, meaning: Meaning, name: &str) -> Option<Panel> {

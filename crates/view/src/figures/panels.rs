@@ -1,9 +1,10 @@
 //! The panels of a run, from the top: what is asked, what the valve does, what comes of it.
 
 use helmsplit_model::{Circuit, PriorityRelief, Quantity, Relief, ReturnSide, Signal};
+use helmsplit_scenario::quantity_text::{Digits, number_from_si};
 
 use super::columns::Columns;
-use crate::plot::{Limit, Panel, Reach, Series, Shade, Where};
+use crate::plot::{Limit, MINUS, Panel, Reach, Series, Shade, Where};
 use crate::style::{Dash, Fill, Meaning};
 use crate::unit_text::unit_text;
 
@@ -36,10 +37,20 @@ impl RunPanels<'_> {
         panels.push(Some(self.pressures()));
         panels.push(Some(self.flows()));
         panels.push(self.wheel());
-        panels.push(self.single("Steering cylinder travel", Meaning::Steering, "y_c", TRAVEL));
+        panels.push(self.single(
+            "Steering cylinder, from mid-stroke",
+            Meaning::Steering,
+            "y_c",
+            TRAVEL,
+        ));
         panels.push(self.single("Priority motor speed", Meaning::Steering, "w_pm", TRAVEL));
         panels.push(self.single("Excess motor speed", Meaning::Consumer, "w_m", TRAVEL));
-        panels.push(self.single("Lift cylinder travel", Meaning::Consumer, "y_l", TRAVEL));
+        panels.push(self.single(
+            "Lift cylinder, from mid-stroke",
+            Meaning::Consumer,
+            "y_l",
+            TRAVEL,
+        ));
         panels.push(Some(self.power()));
         panels.into_iter().flatten().collect()
     }
@@ -97,8 +108,8 @@ impl RunPanels<'_> {
             };
             if constant != 0.0 || signal == Signal::ExcessCommand {
                 let unit = self.columns.unit(signal.quantity());
-                let value = unit.value_from_si(constant);
-                let text = crate::plot::number_text(value, usize::from(value.abs() < 10.0));
+                let text = number_from_si(constant, unit, Digits::Significant(3));
+                let text = text.replace('-', &MINUS.to_string());
                 let symbol = unit_text(unit);
                 self.notes
                     .push(format!("{label}: {text} {symbol} throughout."));
@@ -138,34 +149,35 @@ impl RunPanels<'_> {
     }
 
     fn pressures(&self) -> Panel {
+        use Meaning::{Consumer, Excess, Inlet, Priority, Steering};
         let columns = &self.columns;
-        let lines = [
-            ("Inlet", Meaning::Inlet, "p_in"),
-            ("Priority port", Meaning::Priority, "p_c"),
-            ("Excess port", Meaning::Excess, "p_e"),
-            (
-                "Steering load",
-                Meaning::Steering,
-                Signal::SteeringLoadPressure.name(),
-            ),
-            (
-                "Bench load",
-                Meaning::Steering,
-                Signal::BenchPressure.name(),
-            ),
-            ("Priority motor", Meaning::Steering, "p_pm"),
+        let line =
+            |(label, meaning, name): (&str, Meaning, &str)| columns.series(label, meaning, name);
+        let ports = [
+            ("Inlet", Inlet, "p_in"),
+            ("Priority port", Priority, "p_c"),
+            ("Excess port", Excess, "p_e"),
+        ];
+        let loads = [
+            ("Bench load", Steering, Signal::BenchPressure.name()),
+            ("Priority motor", Steering, "p_pm"),
             (
                 "Excess bench load",
-                Meaning::Consumer,
+                Consumer,
                 Signal::ExcessBenchPressure.name(),
             ),
-            ("Excess motor", Meaning::Consumer, "p_m"),
-            ("Lift, cap end", Meaning::Consumer, "p_cap"),
+            ("Excess motor", Consumer, "p_m"),
+            ("Lift, cap end", Consumer, "p_cap"),
         ];
-        let series = lines
-            .into_iter()
-            .filter_map(|(label, meaning, name)| columns.series(label, meaning, name));
-        let mut panel = columns.panel("Pressure", Quantity::Pressure, series.collect());
+        // What the steering takes from the port, whichever way it turns.
+        let load = columns.size(
+            "Steering load",
+            Steering,
+            Signal::SteeringLoadPressure.name(),
+        );
+        let series = ports.into_iter().filter_map(line).chain(load);
+        let series = series.chain(loads.into_iter().filter_map(line)).collect();
+        let mut panel = columns.panel("Pressure", Quantity::Pressure, series);
         panel.weight = LARGE;
         panel.limits = self.cracking_pressures();
         panel
@@ -225,18 +237,9 @@ impl RunPanels<'_> {
             columns.series(label, meaning, signal.name())
         };
         let mut series: Vec<Series> = always.into_iter().filter_map(line).collect();
-        let demand = columns.series(
-            "Wheel demand",
-            Meaning::Steering,
-            Signal::SteeringDemand.name(),
-        );
-        if let Some(mut demand) = demand {
-            // The port gives oil whichever way the wheel turns.
-            for point in &mut demand.points {
-                point[1] = point[1].abs();
-            }
-            series.push(demand);
-        }
+        // The port gives oil whichever way the wheel turns.
+        let demand = Signal::SteeringDemand.name();
+        series.extend(columns.size("Wheel demand", Meaning::Steering, demand));
         let shut_below = SHUT * columns.largest(Signal::PumpFlow.name());
         let mut shut = Vec::new();
         for relief in reliefs {

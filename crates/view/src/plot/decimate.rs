@@ -163,6 +163,7 @@ fn distance(point: [f64; 2], from: [f64; 2], to: [f64; 2]) -> f64 {
 }
 
 #[cfg(test)]
+#[allow(clippy::float_cmp, reason = "points are copied, never computed")]
 mod tests {
     use super::*;
     use proptest::prelude::*;

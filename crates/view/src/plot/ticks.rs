@@ -146,7 +146,7 @@ impl Decimal {
 
 /// The power of 1000 that keeps labels short.
 fn exponent_for(largest: f64) -> i32 {
-    if largest >= LARGE || largest < SMALL {
+    if !(SMALL..LARGE).contains(&largest) {
         let power = largest.log10() + SLACK;
         3 * (power / 3.0).floor() as i32
     } else {

@@ -7,7 +7,7 @@ use crate::plot::{Axis, Panel};
 const GAP: f64 = 13.5;
 
 /// A name further than this from its line no longer reads as its name, px.
-const FARTHEST: f64 = 24.0;
+const FARTHEST: f64 = 42.0;
 
 /// A line that ends this far before the edge gets no name at the edge, px.
 const SHORT_OF_EDGE: f64 = 2.0;

@@ -5,7 +5,7 @@ use crate::plot::{Axis, Mark};
 use crate::style::TextSize;
 
 /// Rows of event names at most; in a dense burst the first event of each group is named.
-const MOST_ROWS: usize = 3;
+const MOST_ROWS: usize = 4;
 
 /// Distance of a name from its line, and of a name from the next line, px.
 const BESIDE: f64 = 4.0;
@@ -34,6 +34,7 @@ pub(super) fn placed_marks(marks: &[Mark], time: &Axis) -> Vec<PlacedMark> {
         })
         .collect();
     placed.sort_by(|a, b| a.x.total_cmp(&b.x));
+    leave_repetitions_unnamed(&mut placed);
     while stack(&mut placed) >= MOST_ROWS {
         let Some(crowded) = most_crowded(&placed) else {
             break;
@@ -41,6 +42,23 @@ pub(super) fn placed_marks(marks: &[Mark], time: &Axis) -> Vec<PlacedMark> {
         placed[crowded].row = None;
     }
     placed
+}
+
+/// Where the same event comes again before its first name has ended, the first name stands for
+/// all.
+fn leave_repetitions_unnamed(placed: &mut [PlacedMark]) {
+    let mut last: Option<(f64, String)> = None;
+    for mark in placed {
+        match &last {
+            Some((end, label)) if *label == mark.label && mark.x < *end => mark.row = None,
+            _ => last = Some((name_end(mark), mark.label.clone())),
+        }
+    }
+}
+
+/// Where the name of a mark ends, with room before the next line, px.
+fn name_end(mark: &PlacedMark) -> f64 {
+    mark.x + text_width(&mark.label, TextSize::Small) + 2.0 * BESIDE
 }
 
 /// Gives rows to all named marks from right to left; returns the highest row.
@@ -52,7 +70,7 @@ fn stack(placed: &mut [PlacedMark]) -> usize {
         if mark.row.is_none() {
             continue;
         }
-        let end = mark.x + text_width(&mark.label, TextSize::Small) + 2.0 * BESIDE;
+        let end = name_end(mark);
         let crossing = behind.iter().take_while(|other| other.x < end);
         let row = crossing
             .filter_map(|other| other.row)
@@ -92,9 +110,10 @@ mod tests {
     fn place(times: &[f64]) -> Vec<PlacedMark> {
         let marks: Vec<_> = times
             .iter()
-            .map(|&time| Mark {
+            .zip(1..)
+            .map(|(&time, number)| Mark {
                 time,
-                label: "main relief cracks".to_owned(),
+                label: format!("relief {number} cracks"),
             })
             .collect();
         placed_marks(&marks, &Axis::new((0.0, 10.0), (60.0, 860.0), 90.0))
@@ -122,6 +141,22 @@ mod tests {
             row_count(&placed) <= MOST_ROWS,
             "{} rows",
             row_count(&placed)
+        );
+    }
+
+    #[test]
+    fn the_same_event_again_is_named_once() {
+        let again = |time| Mark {
+            time,
+            label: "relief cracks".to_owned(),
+        };
+        let marks = [again(1.0), again(1.3), again(1.6), again(5.0)];
+        let placed = placed_marks(&marks, &Axis::new((0.0, 10.0), (60.0, 860.0), 90.0));
+        let rows: Vec<_> = placed.iter().map(|mark| mark.row).collect();
+        assert_eq!(
+            rows,
+            [Some(0), None, None, Some(0)],
+            "named where it is news"
         );
     }
 

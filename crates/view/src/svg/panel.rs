@@ -25,6 +25,13 @@ const POINT: f64 = 2.2;
 /// Dashes of limits, px: finer than those of series.
 const LIMIT_DASH: [f64; 2] = [2.0, 2.0];
 
+/// Over this length a leader slants to its name, px.
+const SLANT: f64 = 12.0;
+
+/// A line this many times as long as the plot is wide swings so fast that it fills an area: dashes
+/// would only make patterns of their own there.
+const DENSE: f64 = 5.0;
+
 /// Shown where there is nothing to show.
 const NO_DATA: &str = "no data";
 
@@ -159,7 +166,12 @@ impl PanelPainter<'_> {
     }
 
     fn draw_series(&self, xml: &mut Xml, series: &Series, runs: &[Vec<[f64; 2]>]) {
-        let stroke = self.series_stroke(series);
+        let mut stroke = self.series_stroke(series);
+        if runs.iter().map(|run| length(run)).sum::<f64>()
+            > DENSE * (self.sheet.right - self.sheet.left)
+        {
+            stroke = stroke.dashed(&[]);
+        }
         let lines = runs.iter().filter(|run| run.len() > 1);
         let outline: String = lines.map(|run| outline(run.iter().copied())).collect();
         if !outline.is_empty() {
@@ -253,7 +265,7 @@ impl PanelPainter<'_> {
         let right = self.sheet.right;
         let leader = [
             [right + 2.0, label.line_y],
-            [right + 10.0, label.y],
+            [right + SLANT, label.y],
             [right + LEADER - SAMPLE_GAP, label.y],
         ];
         xml.path(&outline(leader), self.series_stroke(series), &series.label);
@@ -261,4 +273,11 @@ impl PanelPainter<'_> {
         let name = Text::new(at, TextSize::Label, self.theme.text.ink);
         xml.write(name, &series.label);
     }
+}
+
+/// Length of a line on paper, px.
+fn length(run: &[[f64; 2]]) -> f64 {
+    run.windows(2)
+        .map(|pair| (pair[1][0] - pair[0][0]).hypot(pair[1][1] - pair[0][1]))
+        .sum()
 }

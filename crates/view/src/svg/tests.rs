@@ -44,7 +44,8 @@ fn texts(document: &Document<'_>) -> Vec<Placed> {
         .map(|node| {
             let parts: Vec<_> = node
                 .descendants()
-                .filter_map(|n| n.is_text().then(|| n.text()))
+                .filter(Node::is_text)
+                .map(|n| n.text())
                 .collect();
             let content = parts.into_iter().flatten().collect::<String>();
             let shift = node.parent().and_then(|group| group.attribute("transform"));

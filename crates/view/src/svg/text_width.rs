@@ -3,7 +3,7 @@
 use crate::style::TextSize;
 
 /// Advance widths of the printable ASCII characters from the space on, in hundredths of the text
-/// size. Measured on DejaVu Sans, the widest face that the type family may fall back to, so that
+/// size. Measured on the face `DejaVu Sans`, the widest face that the type family may fall back to, so that
 /// what is laid out with them fits in every face.
 const WIDTHS: [u8; 95] = [
     32, 40, 46, 84, 64, 95, 78, 27, 39, 39, 50, 84, 32, 36, 32, 34, 64, 64, 64, 64, 64, 64, 64, 64,

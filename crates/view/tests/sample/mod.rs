@@ -207,6 +207,7 @@ pub(crate) fn run() -> Figure {
 }
 
 /// Data that break layouts.
+#[allow(clippy::too_many_lines, reason = "a table of panels")]
 pub(crate) fn awkward() -> Figure {
     let nan = f64::NAN;
     let one = |name: &str, points: Vec<[f64; 2]>| {
