@@ -1,0 +1,94 @@
+//! What the program is, what it leaves out, what to beware of, and its keys.
+
+use egui::{Grid, RichText, ScrollArea, Ui};
+
+use crate::look::Look;
+
+/// Cautions, one paragraph each.
+const CAUTIONS: [&str; 5] = [
+    "Steering is safety-critical: results support, never replace, tests on the machine, the maker's \
+     instructions, local codes and standards (ISO 5010, ISO 10998, ISO 4413 as they apply) and \
+     licensed or competent practice.",
+    "Oil under pressure injects through skin: never feel for leaks; go to a doctor at once.",
+    "Release stored energy (accumulators, raised loads, articulated frames) and lock out before \
+     opening a line.",
+    "Hot oil burns.",
+    "Never raise a relief setting to hide a fault.",
+];
+
+/// What the equations leave out.
+const NOT_MODELLED: &str = "Temperature changes along the circuit; wave travel inside a line \
+    segment; eccentric spools; deformation of bodies; the machine beyond one mass; spring and \
+    friction at the steering cylinder.";
+
+/// Keys and what they do.
+const KEYS: [(&str, &str); 22] = [
+    ("Ctrl+O", "Open a circuit"),
+    ("Ctrl+S", "Save"),
+    ("Ctrl+Shift+S", "Save as"),
+    ("Ctrl+Z", "Undo"),
+    ("Ctrl+Shift+Z, Ctrl+Y", "Redo"),
+    ("Ctrl+Q", "Quit"),
+    ("F1", "This list"),
+    (
+        "Escape",
+        "Close a dialog; leave a field and keep the last good value",
+    ),
+    ("Tab, Shift+Tab", "Next and previous control"),
+    ("Enter", "Press the button; take the value that was typed"),
+    ("Up, Down", "In a field: one step more or less"),
+    ("Page up, Page down", "In a field: ten steps more or less"),
+    ("Wheel", "In a field: one step more or less"),
+    ("Drag a name", "The value beside it"),
+    (
+        "Left, Right",
+        "In the traces: cursor by a pixel, with Shift by twenty",
+    ),
+    ("Home, End", "In the traces: cursor to start or end"),
+    (
+        "Plus, Minus, 0",
+        "In the traces: zoom in, zoom out, whole run",
+    ),
+    ("Ctrl+wheel", "Over the traces: zoom around the pointer"),
+    ("Shift+wheel", "Over the traces: move along"),
+    ("Click or drag", "In the traces: put the cursor"),
+    ("Drag, other button", "In the traces: zoom to the stretch"),
+    ("Double click", "In the traces: whole run"),
+];
+
+/// Draws the about page.
+pub(crate) fn about(ui: &mut Ui, look: &Look) {
+    ui.heading(format!("Helmsplit {}", env!("CARGO_PKG_VERSION")));
+    ui.label(
+        "Simulator of steering circuits for mobile machines: fixed-displacement pump, priority \
+         flow control valve, steering, and what the excess port feeds.",
+    );
+    ui.label(RichText::new("Licence: MIT or Apache-2.0, as you choose.").color(look.quiet()));
+    ScrollArea::vertical().max_height(400.0).show(ui, |ui| {
+        ui.add_space(6.0);
+        ui.label(RichText::new("Cautions").strong());
+        for caution in CAUTIONS {
+            ui.label(caution);
+        }
+        ui.add_space(6.0);
+        ui.label(RichText::new("Not modelled").strong());
+        ui.label(NOT_MODELLED);
+    });
+}
+
+/// Draws the list of keys.
+pub(crate) fn keys(ui: &mut Ui, look: &Look) {
+    ui.heading("Keys and gestures");
+    ScrollArea::vertical().max_height(460.0).show(ui, |ui| {
+        Grid::new("keys")
+            .num_columns(2)
+            .spacing([24.0, 4.0])
+            .show(ui, |ui| {
+                for (key, what) in KEYS {
+                    ui.label(RichText::new(key).strong());
+                    ui.label(RichText::new(what).color(look.ink()));
+                    ui.end_row();
+                }
+            });
+    });
+}

@@ -1,0 +1,160 @@
+//! What the app does when it is asked.
+
+use std::path::Path;
+
+use egui::{Context, ViewportCommand};
+use helmsplit_study::CheckId;
+use helmsplit_view::figures::solved_figure;
+
+use super::HelmsplitApp;
+use crate::action::Action;
+use crate::command::{Command, Stage, Target};
+use crate::dialogs::Dialog;
+use crate::document::Document;
+use crate::menu;
+use crate::traces::TraceView;
+use crate::worker::{Failure, Quality};
+
+impl HelmsplitApp {
+    /// Does what a part of the window asked for.
+    pub(super) fn act(&mut self, context: &Context, action: Action) {
+        match action {
+            Action::Edit(command, stage) => self.edit(context, &command, stage),
+            Action::FinishGesture => self.document.finish_gesture(),
+            Action::Undo => self.step("Undone", Document::undo),
+            Action::Redo => self.step("Redone", Document::redo),
+            Action::New(_) | Action::Open(_) | Action::Quit if self.document.is_edited() => {
+                let next = Box::new(action);
+                self.dialog = Some(Dialog::Unsaved { next });
+            }
+            Action::New(_) | Action::Open(_) | Action::Quit => self.replace(context, action),
+            Action::Discarding(next) => self.replace(context, *next),
+            Action::Save => self.save(),
+            Action::SaveAs(path) => self.save_as(&path),
+            Action::Cancel => {
+                self.worker.cancel();
+                self.failure = Some(Failure {
+                    revision: self.document.revision(),
+                    reason: "Cancelled; the traces are of the last good values.".to_owned(),
+                });
+            }
+            Action::Units(units) => {
+                self.settings.units = units;
+                self.fields.clear();
+                if let Some(answer) = &self.answer {
+                    self.figure = solved_figure(&answer.scenario, &answer.solved, units);
+                    self.generation += 1;
+                }
+            }
+            Action::Appearance(appearance) => self.settings.appearance = appearance,
+            Action::Scale(scale) => self.settings.scale = scale,
+            Action::Show(dialog) => self.dialog = Some(dialog),
+            Action::CloseDialog => self.dialog = None,
+            Action::Select(part) => self.selected = part,
+            Action::Evidence(id) => self.open_evidence(id),
+            Action::CloseEvidence => self.evidence = None,
+        }
+    }
+
+    fn edit(&mut self, context: &Context, command: &Command, stage: Stage) {
+        self.notice.clear();
+        self.last_edit = context.input(|input| input.time);
+        let result = self.document.apply(command, stage);
+        let Target::Parameter(id) = command.target() else {
+            return;
+        };
+        match (result, command) {
+            (Err(finding), Command::SetText { text, .. }) if stage == Stage::Finished => {
+                let hint = if finding.hint.is_empty() {
+                    String::new()
+                } else {
+                    format!("; {}", finding.hint)
+                };
+                let reason = format!("{}{hint}", finding.message);
+                self.fields.refuse(id, text.clone(), reason);
+            }
+            // A step beyond the range stays where it was: the field shows that.
+            (Err(_), _) => {}
+            (Ok(()), _) => self.fields.accept(id),
+        }
+    }
+
+    fn step(&mut self, word: &str, step: fn(&mut Document) -> bool) {
+        let name = if word == "Undone" {
+            self.document.undo_name()
+        } else {
+            self.document.redo_name()
+        };
+        let name = name.map(str::to_owned);
+        self.fields.clear();
+        if step(&mut self.document)
+            && let Some(name) = name
+        {
+            self.notice = format!("{word}: {name}");
+        }
+    }
+
+    fn replace(&mut self, context: &Context, action: Action) {
+        let document = match action {
+            Action::New(preset) => Document::from_preset(preset),
+            Action::Open(path) => Document::open(&path),
+            Action::Quit => {
+                self.leaving = true;
+                context.send_viewport_cmd(ViewportCommand::Close);
+                return;
+            }
+            other => return self.act(context, other),
+        };
+        match document {
+            Ok(document) => {
+                self.dialog = None;
+                self.document = document;
+                self.fields.clear();
+                self.view = TraceView::default();
+                self.evidence = None;
+                self.failure = None;
+                self.notice.clear();
+                self.request(Quality::Final);
+            }
+            Err(findings) => {
+                self.dialog = Some(Dialog::problem("The circuit was not opened", findings));
+            }
+        }
+    }
+
+    fn save(&mut self) {
+        match self.document.path().map(Path::to_owned) {
+            Some(path) => self.save_as(&path),
+            None => {
+                let Action::Show(dialog) = menu::save_as(&self.document) else {
+                    return;
+                };
+                self.dialog = Some(dialog);
+            }
+        }
+    }
+
+    fn save_as(&mut self, path: &Path) {
+        match self.document.save_as(path) {
+            Ok(rewritten) => {
+                self.dialog = None;
+                self.notice = if rewritten {
+                    "Saved; the file was written anew, with our comments in place of others"
+                        .to_owned()
+                } else {
+                    "Saved".to_owned()
+                };
+            }
+            Err(error) => self.dialog = Some(Dialog::problem("The circuit was not saved", error)),
+        }
+    }
+
+    fn open_evidence(&mut self, id: CheckId) {
+        self.evidence = Some(id);
+        let check = self.checks().iter().find(|check| check.id == id);
+        let time = check.and_then(|check| check.evidence.as_ref()?.time);
+        if let (Some(time), Some(whole)) = (time, self.figure.time_range()) {
+            self.view.jump(time, whole);
+        }
+    }
+}

@@ -1,0 +1,321 @@
+//! The app: owns the circuit, the solver and what is in view; everything else draws and asks.
+
+mod acting;
+
+use std::sync::Arc;
+use std::time::Duration;
+
+use eframe::{App, CreationContext, Frame};
+use egui::{Context, Ui, ViewportCommand};
+use helmsplit_scenario::Severity;
+use helmsplit_study::{Check, CheckId};
+use helmsplit_view::figures::solved_figure;
+use helmsplit_view::plot::Figure;
+
+use crate::action::Action;
+use crate::dialogs::{Dialog, dialog};
+use crate::document::Document;
+use crate::error::AppError;
+use crate::look::Look;
+use crate::menu;
+use crate::parts::{PARTS, Part};
+use crate::quantity_field::{FieldContext, FieldStates};
+use crate::response_page::{Page, response_page};
+use crate::ribbon::ribbon;
+use crate::settings::{Appearance, Settings};
+use crate::status::{StatusLine, status_line};
+use crate::traces::{Shown, TraceView};
+use crate::worker::{Answer, Failure, Job, Quality, Worker};
+
+/// Stepping a value counts as finished after this pause, s.
+const PAUSE: f64 = 0.4;
+
+/// The window.
+pub struct HelmsplitApp {
+    document: Document,
+    worker: Worker,
+    answer: Option<Arc<Answer>>,
+    figure: Figure,
+    /// Counts up with each figure.
+    generation: u64,
+    failure: Option<Failure>,
+    requested: Option<(u64, Quality)>,
+    last_edit: f64,
+    settings: Settings,
+    look: Look,
+    view: TraceView,
+    fields: FieldStates,
+    selected: Part,
+    evidence: Option<CheckId>,
+    dialog: Option<Dialog>,
+    notice: String,
+    leaving: bool,
+}
+
+impl HelmsplitApp {
+    /// A window on a circuit. The solving begins at once.
+    ///
+    /// # Errors
+    /// [`AppError`] if a theme does not read or the system has no thread for the solver.
+    pub fn new(creation: &CreationContext<'_>, document: Document) -> Result<Self, AppError> {
+        let stored = creation.storage;
+        let settings = stored.and_then(|s| eframe::get_value(s, eframe::APP_KEY));
+        Self::with_settings(&creation.egui_ctx, document, settings.unwrap_or_default())
+    }
+
+    /// A window on a circuit, with settings.
+    ///
+    /// # Errors
+    /// [`AppError`] if a theme does not read or the system has no thread for the solver.
+    pub fn with_settings(
+        context: &Context,
+        document: Document,
+        settings: Settings,
+    ) -> Result<Self, AppError> {
+        let wake = context.clone();
+        let mut app = Self {
+            document,
+            worker: Worker::start(move || wake.request_repaint())?,
+            answer: None,
+            figure: Figure::default(),
+            generation: 0,
+            failure: None,
+            requested: None,
+            last_edit: 0.0,
+            settings,
+            look: Look::load(false)?,
+            view: TraceView::default(),
+            fields: FieldStates::default(),
+            selected: PARTS[3],
+            evidence: None,
+            dialog: None,
+            notice: String::new(),
+            leaving: false,
+        };
+        app.look.apply(context);
+        app.follow_settings(context);
+        app.request(Quality::Final);
+        Ok(app)
+    }
+
+    /// The circuit being edited.
+    #[must_use]
+    pub fn document(&self) -> &Document {
+        &self.document
+    }
+
+    /// The last good result.
+    #[must_use]
+    pub fn answer(&self) -> Option<&Answer> {
+        self.answer.as_deref()
+    }
+
+    /// Whether the last good result is that of the present circuit, at full accuracy.
+    #[must_use]
+    pub fn is_up_to_date(&self) -> bool {
+        let fits = |answer: &Arc<Answer>| {
+            answer.revision == self.document.revision() && answer.quality == Quality::Final
+        };
+        self.answer.as_ref().is_some_and(fits) && !self.worker.is_busy()
+    }
+
+    /// Why the present circuit has no result, if that is so.
+    #[must_use]
+    pub fn failure(&self) -> Option<&Failure> {
+        self.failure.as_ref()
+    }
+
+    /// The moment of the cursor, s.
+    #[must_use]
+    pub fn cursor(&self) -> f64 {
+        self.view.cursor
+    }
+
+    /// The figure being shown.
+    #[must_use]
+    pub fn figure(&self) -> &Figure {
+        &self.figure
+    }
+
+    fn checks(&self) -> &[Check] {
+        self.answer
+            .as_ref()
+            .map_or(&[], |answer| &answer.solved.checks)
+    }
+
+    /// Hands the present circuit to the solver, unless it is known not to be one.
+    fn request(&mut self, quality: Quality) {
+        let revision = self.document.revision();
+        self.requested = Some((revision, quality));
+        let errors: Vec<String> = self
+            .document
+            .findings()
+            .iter()
+            .filter(|finding| finding.severity == Severity::Error)
+            .map(ToString::to_string)
+            .collect();
+        if !errors.is_empty() {
+            self.worker.cancel();
+            let reason = format!(
+                "Not solved, the traces are of the last good values. {}",
+                errors.join("\n")
+            );
+            self.failure = Some(Failure { revision, reason });
+            return;
+        }
+        self.worker.submit(Job {
+            revision,
+            scenario: self.document.scenario().clone(),
+            folder: self.document.folder(),
+            quality,
+            units: self.settings.units,
+        });
+    }
+
+    fn take_news(&mut self) {
+        while let Some(news) = self.worker.news() {
+            match news {
+                Ok(answer) => {
+                    self.failure = None;
+                    self.figure = if answer.units == self.settings.units {
+                        answer.figure.clone()
+                    } else {
+                        solved_figure(&answer.scenario, &answer.solved, self.settings.units)
+                    };
+                    self.generation += 1;
+                    self.answer = Some(Arc::new(answer));
+                }
+                Err(failure) => self.failure = Some(failure),
+            }
+        }
+    }
+
+    /// Asks for what the present circuit still lacks: a draft in a gesture, all of it after.
+    fn follow_document(&mut self, context: &Context) {
+        let revision = self.document.revision();
+        let quality = if self.document.in_gesture() {
+            Quality::Draft
+        } else {
+            Quality::Final
+        };
+        let wanted = (revision, quality);
+        let better = (revision, Quality::Final);
+        if self.requested != Some(wanted) && self.requested != Some(better) {
+            self.request(quality);
+        }
+        if self.document.in_gesture() && !context.input(|input| input.pointer.any_down()) {
+            let left = PAUSE - (context.input(|input| input.time) - self.last_edit);
+            if left <= 0.0 {
+                self.document.finish_gesture();
+                context.request_repaint();
+            } else {
+                context.request_repaint_after(Duration::from_secs_f64(left));
+            }
+        }
+    }
+
+    fn follow_settings(&mut self, context: &Context) {
+        let dark = match self.settings.appearance {
+            Appearance::Light => false,
+            Appearance::Dark => true,
+            Appearance::System => context
+                .system_theme()
+                .is_some_and(|theme| theme == egui::Theme::Dark),
+        };
+        if dark != self.look.is_dark() {
+            match Look::load(dark) {
+                Ok(look) => {
+                    self.look = look;
+                    self.look.apply(context);
+                }
+                Err(error) => self.dialog = Some(Dialog::problem("The theme", error)),
+            }
+        }
+        let zoom = f32::from(self.settings.scale) / 100.0;
+        if (context.zoom_factor() - zoom).abs() > 1e-3 {
+            context.set_zoom_factor(zoom);
+        }
+    }
+
+    fn guard_closing(&mut self, context: &Context) {
+        let closing = context.input(|input| input.viewport().close_requested());
+        if closing && !self.leaving && self.document.is_edited() {
+            context.send_viewport_cmd(ViewportCommand::CancelClose);
+            let next = Box::new(Action::Quit);
+            self.dialog = Some(Dialog::Unsaved { next });
+        }
+    }
+
+    fn draw(&mut self, ui: &mut Ui, actions: &mut Vec<Action>) {
+        let answer = self.answer.clone();
+        let checks: &[Check] = answer.as_ref().map_or(&[], |answer| &answer.solved.checks);
+        let busy = self.worker.is_busy();
+        let end = self.document.scenario().solver().duration;
+        let stale = self.failure.is_some();
+        egui::Panel::top("menu").show(ui, |ui| {
+            menu::menu_bar(ui, &self.document, &self.settings, &self.look, actions);
+        });
+        egui::Panel::top("verdicts").show(ui, |ui| {
+            let units = self.settings.units;
+            ribbon(ui, checks, self.evidence, units, &self.look, actions);
+        });
+        egui::Panel::bottom("status").show(ui, |ui| {
+            let status = StatusLine {
+                answer: answer.as_deref(),
+                progress: busy.then(|| (self.worker.progress(), end)),
+                document: &self.document,
+                notice: &self.notice,
+                look: &self.look,
+            };
+            status_line(ui, &status, actions);
+        });
+        let page = Page {
+            fields: FieldContext {
+                scenario: self.document.scenario(),
+                findings: self.document.findings(),
+                units: self.settings.units,
+                look: &self.look,
+            },
+            selected: self.selected,
+            evidence: self.evidence,
+            checks,
+            shown: answer.as_ref().map(|_| Shown {
+                figure: &self.figure,
+                generation: self.generation,
+                pale: stale,
+                look: &self.look,
+            }),
+            trouble: self.failure.as_ref().map(|failure| failure.reason.as_str()),
+        };
+        response_page(ui, &page, &mut self.fields, &mut self.view, actions);
+        if let Some(open) = &mut self.dialog {
+            dialog(ui.ctx(), open, &self.look, actions);
+        }
+    }
+}
+
+impl App for HelmsplitApp {
+    fn ui(&mut self, ui: &mut Ui, _frame: &mut Frame) {
+        let context = ui.ctx().clone();
+        self.take_news();
+        self.follow_settings(&context);
+        self.guard_closing(&context);
+        let mut actions = Vec::new();
+        if self.dialog.is_none() {
+            menu::shortcuts(&context, &self.document, &mut actions);
+        }
+        self.draw(ui, &mut actions);
+        let acted = !actions.is_empty();
+        for action in actions {
+            self.act(&context, action);
+        }
+        self.follow_document(&context);
+        if acted {
+            context.request_repaint();
+        }
+    }
+
+    fn save(&mut self, storage: &mut dyn eframe::Storage) {
+        eframe::set_value(storage, eframe::APP_KEY, &self.settings);
+    }
+}

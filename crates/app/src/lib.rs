@@ -1,0 +1,40 @@
+//! The window of Helmsplit: edit a circuit and see it solved at once.
+//!
+//! Start with [`run`]. [`HelmsplitApp`] owns everything; the parts of the window draw and ask
+//! (private `Action`s), and only the app changes things: the circuit through [`Command`]s on its
+//! [`Document`], the solving through the [`Worker`].
+//!
+//! # Conventions
+//! The thread of the window never solves. Colours come from theme files through one module.
+//! Every control has a name that a screen reader and a test can find.
+
+mod about;
+mod action;
+mod app;
+mod card;
+mod command;
+mod dialogs;
+mod document;
+mod error;
+mod evidence;
+mod look;
+mod menu;
+mod parts;
+mod quantity_field;
+mod response_page;
+mod ribbon;
+mod settings;
+mod solver;
+mod start;
+mod status;
+mod text;
+mod traces;
+mod worker;
+
+pub use app::HelmsplitApp;
+pub use command::{Command, Stage, Target};
+pub use document::Document;
+pub use error::AppError;
+pub use settings::{Appearance, Settings};
+pub use start::run;
+pub use worker::{Answer, Failure, Job, Quality, Worker};

@@ -1,0 +1,385 @@
+//! One number of the circuit: typed in any unit, dragged, stepped by keys or wheel.
+
+use std::collections::HashMap;
+
+use egui::{Align, CursorIcon, Id, Key, Layout, Modifiers, RichText, Sense, TextEdit, Ui, vec2};
+use helmsplit_model::Quantity;
+use helmsplit_scenario::convert::display_unit;
+use helmsplit_scenario::quantity_text::{Digits, number_from_si, parse};
+use helmsplit_scenario::units::{Unit, all_units};
+use helmsplit_scenario::{Findings, Parameter, ParameterId, Scenario, Severity, UnitSystem};
+use helmsplit_view::unit_text;
+
+use crate::action::Action;
+use crate::command::{Command, Stage};
+use crate::look::{Look, SMALL};
+use crate::text::{real_minus, with_unit};
+
+/// Digits of a number at rest.
+const DIGITS: u32 = 7;
+
+/// Pointer travel for one step, points.
+const STEP_TRAVEL: f32 = 4.0;
+
+/// Steps across the usual range, about.
+const STEPS: f64 = 100.0;
+
+const TEXT_WIDTH: f32 = 76.0;
+const UNIT_WIDTH: f32 = 66.0;
+const RESET_WIDTH: f32 = 44.0;
+
+/// What all fields share between frames.
+#[derive(Debug, Default)]
+pub(crate) struct FieldStates {
+    /// The text being typed.
+    typing: Option<(ParameterId, String)>,
+    /// Texts that were refused, with the reason; the circuit keeps the last good value.
+    refused: HashMap<ParameterId, (String, String)>,
+    /// The drag under way: the value it began with in the display unit, and the way so far.
+    drag: Option<(ParameterId, f64, f32)>,
+}
+
+impl FieldStates {
+    /// The circuit refused `text`.
+    pub(crate) fn refuse(&mut self, id: ParameterId, text: String, reason: String) {
+        self.refused.insert(id, (text, reason));
+    }
+
+    /// The circuit took a value.
+    pub(crate) fn accept(&mut self, id: ParameterId) {
+        self.refused.remove(&id);
+    }
+
+    /// Another circuit.
+    pub(crate) fn clear(&mut self) {
+        *self = Self::default();
+    }
+}
+
+/// What a field needs to know.
+pub(crate) struct FieldContext<'a> {
+    pub(crate) scenario: &'a Scenario,
+    pub(crate) findings: &'a Findings,
+    pub(crate) units: UnitSystem,
+    pub(crate) look: &'a Look,
+}
+
+/// Draws the field of one parameter.
+pub(crate) fn quantity_field(
+    ui: &mut Ui,
+    row: &'static Parameter,
+    context: &FieldContext<'_>,
+    states: &mut FieldStates,
+    actions: &mut Vec<Action>,
+) {
+    let unit = display_unit(row, context.units);
+    let field = Field {
+        row,
+        unit,
+        step: step_of(row, unit),
+        value: unit.value_from_si(context.scenario.si(row.id)),
+        context,
+    };
+    ui.horizontal(|ui| {
+        ui.spacing_mut().item_spacing.x = 4.0;
+        let room = ui.available_width() - TEXT_WIDTH - UNIT_WIDTH - RESET_WIDTH - 16.0;
+        let label = field.label(ui, room.max(80.0), states, actions);
+        field.number(ui, label, states, actions);
+        field.unit(ui);
+        field.reset(ui, actions);
+    });
+    field.remarks(ui, states);
+}
+
+struct Field<'a> {
+    row: &'static Parameter,
+    unit: &'static Unit,
+    step: f64,
+    value: f64,
+    context: &'a FieldContext<'a>,
+}
+
+impl Field<'_> {
+    /// The name, which is also the handle to drag. Gives its id.
+    fn label(
+        &self,
+        ui: &mut Ui,
+        width: f32,
+        states: &mut FieldStates,
+        actions: &mut Vec<Action>,
+    ) -> Id {
+        let text = egui::Label::new(self.row.label)
+            .truncate()
+            .sense(Sense::drag());
+        let height = ui.spacing().interact_size.y;
+        let response = ui
+            .allocate_ui_with_layout(vec2(width, height), Layout::left_to_right(Align::Center), {
+                |ui: &mut Ui| {
+                    ui.set_min_width(width);
+                    ui.add(text)
+                }
+            })
+            .inner
+            .on_hover_cursor(CursorIcon::ResizeHorizontal)
+            .on_hover_ui(|ui| self.tooltip(ui));
+        let id = self.row.id;
+        if response.drag_started() {
+            states.drag = Some((id, self.value, 0.0));
+        }
+        if let Some((dragged, from, way)) = &mut states.drag
+            && *dragged == id
+        {
+            if response.dragged() {
+                let before = (*way / STEP_TRAVEL).round();
+                *way += response.drag_delta().x;
+                let steps = (*way / STEP_TRAVEL).round();
+                let (from, moved) = (*from, (steps - before).abs() > 0.0);
+                if moved {
+                    states.typing = None;
+                    self.set(from + f64::from(steps) * self.step, actions);
+                }
+            }
+            if response.drag_stopped() {
+                states.drag = None;
+                actions.push(Action::FinishGesture);
+            }
+        }
+        response.id
+    }
+
+    fn number(&self, ui: &mut Ui, label: Id, states: &mut FieldStates, actions: &mut Vec<Action>) {
+        let id = self.row.id;
+        let field_id = Id::unique(("quantity field", self.row.path));
+        let focused = ui.memory(|memory| memory.has_focus(field_id));
+        if focused {
+            self.nudges(ui, states, actions);
+        }
+        let shown = self.shown();
+        let mut text = match (&states.typing, states.refused.get(&id)) {
+            (Some((typed, text)), _) if *typed == id => text.clone(),
+            (_, Some((text, _))) => text.clone(),
+            _ => shown.clone(),
+        };
+        let mut edit = TextEdit::singleline(&mut text)
+            .id(field_id)
+            .desired_width(TEXT_WIDTH - 8.0)
+            .align(egui::Align2::RIGHT_CENTER);
+        if states.refused.contains_key(&id) {
+            edit = edit.text_color(self.context.look.error());
+        }
+        let response = ui.add(edit).labelled_by(label);
+        if response.changed() {
+            states.typing = Some((id, text.clone()));
+        }
+        if response.lost_focus() {
+            let typed = states.typing.take_if(|(typed, _)| *typed == id);
+            if ui.input(|input| input.key_pressed(Key::Escape)) {
+                states.refused.remove(&id);
+            } else if let Some((_, typed)) = typed {
+                let text = self.completed(&typed);
+                let command = Command::SetText { id, text };
+                actions.push(Action::Edit(command, Stage::Finished));
+            }
+            actions.push(Action::FinishGesture);
+        }
+    }
+
+    /// Arrow keys, page keys and wheel step the value of the focused field.
+    fn nudges(&self, ui: &Ui, states: &mut FieldStates, actions: &mut Vec<Action>) {
+        let keys = [
+            (Modifiers::NONE, Key::ArrowUp, 1.0),
+            (Modifiers::NONE, Key::ArrowDown, -1.0),
+            (Modifiers::NONE, Key::PageUp, 10.0),
+            (Modifiers::NONE, Key::PageDown, -10.0),
+        ];
+        let mut steps = ui.input_mut(|input| {
+            let pressed = |&(modifiers, key, steps): &(Modifiers, Key, f64)| {
+                f64::from(u8::from(input.consume_key(modifiers, key))) * steps
+            };
+            keys.iter().map(pressed).sum::<f64>()
+        });
+        if ui.rect_contains_pointer(ui.min_rect()) {
+            let turned = ui.input_mut(|input| std::mem::take(&mut input.smooth_scroll_delta.y));
+            steps += f64::from(turned.signum()) * f64::from(u8::from(turned.abs() > 0.5));
+        }
+        if steps != 0.0 {
+            states.typing = None;
+            self.set(self.value + steps * self.step, actions);
+        }
+    }
+
+    /// Asks for the value nearest to `wanted` on the grid of steps.
+    fn set(&self, wanted: f64, actions: &mut Vec<Action>) {
+        let number = (wanted / self.step).round() * self.step;
+        let places = (-self.step.log10().floor()).clamp(0.0, 12.0) as usize;
+        let text = self.completed(&format!("{number:.places$}"));
+        let command = Command::SetText {
+            id: self.row.id,
+            text,
+        };
+        actions.push(Action::Edit(command, Stage::Ongoing));
+    }
+
+    /// A bare number gets the unit that stands beside the field.
+    fn completed(&self, typed: &str) -> String {
+        let typed = typed.trim().replace(helmsplit_view::plot::MINUS, "-");
+        if typed.parse::<f64>().is_ok() && !self.unit.is_bare() {
+            format!("{typed} {}", self.unit)
+        } else {
+            typed
+        }
+    }
+
+    /// The value at rest.
+    fn shown(&self) -> String {
+        let si = self.context.scenario.si(self.row.id);
+        real_minus(&number_from_si(si, self.unit, Digits::Significant(DIGITS)))
+    }
+
+    fn unit(&self, ui: &mut Ui) {
+        let text = RichText::new(unit_text(self.unit)).color(self.context.look.quiet());
+        let height = ui.spacing().interact_size.y;
+        ui.allocate_ui_with_layout(
+            vec2(UNIT_WIDTH, height),
+            Layout::left_to_right(Align::Center),
+            |ui| {
+                ui.set_min_width(UNIT_WIDTH);
+                ui.add(egui::Label::new(text).truncate());
+            },
+        );
+    }
+
+    fn reset(&self, ui: &mut Ui, actions: &mut Vec<Action>) {
+        let id = self.row.id;
+        if self.context.scenario.is_default(id) {
+            return;
+        }
+        let text = RichText::new("reset").size(SMALL);
+        let response = ui.add(egui::Button::new(text).frame(false));
+        let name = format!("Reset {}", self.row.label);
+        response.widget_info(|| {
+            egui::WidgetInfo::labeled(egui::accesskit::Role::Button, true, name.clone())
+        });
+        if response
+            .on_hover_text(format!("Back to the default, {}", self.row.default))
+            .clicked()
+        {
+            let command = Command::Reset { id };
+            actions.push(Action::Edit(command, Stage::Finished));
+        }
+    }
+
+    /// What is wrong or doubtful, under the field.
+    fn remarks(&self, ui: &mut Ui, states: &FieldStates) {
+        let look = self.context.look;
+        let remark = |ui: &mut Ui, text: String, colour| {
+            ui.label(RichText::new(text).size(SMALL).color(colour));
+        };
+        if let Some((_, reason)) = states.refused.get(&self.row.id) {
+            remark(ui, format!("Not taken: {reason}"), look.error());
+        } else if let Some((typed, text)) = &states.typing
+            && *typed == self.row.id
+            && let Err(error) = parse(&self.completed(text), self.row.quantity)
+        {
+            remark(ui, format!("Not yet: {error}"), look.warning());
+        }
+        let own = self.context.findings.iter();
+        for finding in own.filter(|finding| finding.path == self.row.path) {
+            let (word, colour) = match finding.severity {
+                Severity::Error => ("Error", look.error()),
+                Severity::Warning => ("Note", look.warning()),
+            };
+            let hint = if finding.hint.is_empty() {
+                String::new()
+            } else {
+                format!("; {}", finding.hint)
+            };
+            remark(ui, format!("{word}: {}{hint}", finding.message), colour);
+        }
+    }
+
+    fn tooltip(&self, ui: &mut Ui) {
+        ui.set_max_width(320.0);
+        let row = self.row;
+        let symbol = if row.symbol.is_empty() {
+            String::new()
+        } else {
+            format!("  ({})", row.symbol)
+        };
+        ui.strong(format!("{}{symbol}", row.label));
+        ui.label(row.note);
+        let own = row.unit();
+        let text = |number: f64| with_unit(own.si_from_value(number), self.unit, 4);
+        ui.label(format!(
+            "Usual: {} to {}. Allowed: {} to {}.",
+            text(row.usual.low),
+            text(row.usual.high),
+            text(row.allowed.low),
+            text(row.allowed.high)
+        ));
+        if !row.source.is_empty() {
+            ui.weak(format!("Source: {}", row.source));
+        }
+        let same: Vec<_> = all_units()
+            .iter()
+            .filter(|unit| unit.quantity() == row.quantity && !unit.is_bare())
+            .map(unit_text)
+            .collect();
+        if same.len() > 1 {
+            ui.weak(format!("Type any of {}.", same.join(", ")));
+        }
+        ui.weak("Drag the name, or step with arrow keys, Page keys or the wheel.");
+    }
+}
+
+/// A round step, about a hundredth of the usual range, in the display unit.
+fn step_of(row: &Parameter, unit: &Unit) -> f64 {
+    let span = row
+        .unit()
+        .si_from_difference(row.usual.high - row.usual.low);
+    let raw = (span / unit.si_from_difference(1.0) / STEPS).abs();
+    if row.quantity == Quantity::Count {
+        return 1.0;
+    }
+    if !(raw.is_finite() && raw > 0.0) {
+        return 1.0;
+    }
+    let decade = 10f64.powf(raw.log10().floor());
+    let lead = raw / decade;
+    let round = if lead < 1.5 {
+        1.0
+    } else if lead < 3.5 {
+        2.0
+    } else if lead < 7.5 {
+        5.0
+    } else {
+        10.0
+    };
+    round * decade
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use helmsplit_scenario::parameters;
+
+    #[test]
+    fn steps_are_round_and_fit_the_usual_range() {
+        for row in parameters() {
+            for units in UnitSystem::ALL {
+                let unit = display_unit(row, units);
+                let step = step_of(row, unit);
+                let span = row
+                    .unit()
+                    .si_from_difference(row.usual.high - row.usual.low);
+                let count = span / unit.si_from_difference(step);
+                let counted = row.quantity == Quantity::Count;
+                assert!(
+                    counted || (40.0..=200.0).contains(&count),
+                    "{}: {count} steps of {step} {unit}",
+                    row.path
+                );
+            }
+        }
+    }
+}

@@ -1,0 +1,127 @@
+//! The response page: parts and their card on the left, traces on the right, evidence on demand.
+
+use egui::{CentralPanel, Frame, Margin, Panel, RichText, Ui};
+use helmsplit_study::{Check, CheckId};
+
+use crate::action::Action;
+use crate::card::{card, part_list};
+use crate::evidence::evidence;
+use crate::look::SMALL;
+use crate::parts::Part;
+use crate::quantity_field::{FieldContext, FieldStates};
+use crate::text::on_screen;
+use crate::traces::{Shown, TraceView, traces};
+
+/// Narrowest and widest pane of parts, points.
+const PARTS_WIDTH: std::ops::RangeInclusive<f32> = 330.0..=520.0;
+
+/// Narrowest and widest pane of evidence, points.
+const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 320.0..=520.0;
+
+/// What the page shows.
+pub(crate) struct Page<'a> {
+    pub(crate) fields: FieldContext<'a>,
+    pub(crate) selected: Part,
+    /// The check whose evidence is open.
+    pub(crate) evidence: Option<CheckId>,
+    pub(crate) checks: &'a [Check],
+    /// `None` until the first solve is done.
+    pub(crate) shown: Option<Shown<'a>>,
+    /// Why the traces are not those of the present circuit.
+    pub(crate) trouble: Option<&'a str>,
+}
+
+/// Draws the page.
+pub(crate) fn response_page(
+    ui: &mut Ui,
+    page: &Page<'_>,
+    states: &mut FieldStates,
+    view: &mut TraceView,
+    actions: &mut Vec<Action>,
+) {
+    let look = page.fields.look;
+    let frame = Frame::NONE
+        .fill(ui.visuals().panel_fill)
+        .inner_margin(Margin::symmetric(10, 6));
+    Panel::left("parts")
+        .frame(frame)
+        .default_size(348.0)
+        .size_range(PARTS_WIDTH)
+        .show(ui, |ui| {
+            part_list(ui, page.selected, &page.fields, actions);
+            ui.separator();
+            card(ui, page.selected, &page.fields, states, actions);
+        });
+    let open = page
+        .evidence
+        .and_then(|id| page.checks.iter().find(|check| check.id == id));
+    if let Some(check) = open {
+        Panel::right("evidence")
+            .frame(frame)
+            .default_size(344.0)
+            .size_range(EVIDENCE_WIDTH)
+            .show(ui, |ui| {
+                evidence(ui, check, &page.fields, states, actions);
+            });
+    }
+    let ground = crate::look::egui_colour(look.theme.background);
+    let frame = Frame::NONE
+        .fill(ground)
+        .inner_margin(Margin::symmetric(10, 6));
+    CentralPanel::default().frame(frame).show(ui, |ui| {
+        toolbar(ui, page, view);
+        if let Some(trouble) = page.trouble {
+            ui.label(RichText::new(on_screen(trouble)).color(look.error()));
+        }
+        match &page.shown {
+            Some(shown) => traces(ui, shown, view),
+            None if page.trouble.is_none() => {
+                ui.weak("The circuit is being solved.");
+            }
+            None => {}
+        }
+    });
+}
+
+/// What the page answers, and zoom.
+fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView) {
+    let look = page.fields.look;
+    ui.horizontal(|ui| {
+        ui.label(RichText::new("Response").strong());
+        let room = ui.available_width() > 620.0;
+        if room {
+            let question = "What the circuit does over the manoeuvre.";
+            ui.label(RichText::new(question).color(look.quiet()));
+        }
+        ui.with_layout(egui::Layout::right_to_left(egui::Align::Center), |ui| {
+            let Some(shown) = &page.shown else { return };
+            let Some(whole) = shown.figure.time_range() else {
+                return;
+            };
+            ui.menu_button("Traces", |ui| {
+                for panel in &shown.figure.panels {
+                    let mut on = view.shows(&panel.label);
+                    if ui.checkbox(&mut on, &panel.label).changed() {
+                        view.set_shown(&panel.label, on);
+                    }
+                }
+                ui.separator();
+                ui.checkbox(&mut view.follow, "Value axes follow the zoom");
+                for note in &shown.figure.notes {
+                    let text = RichText::new(on_screen(note)).size(SMALL);
+                    ui.label(text.color(look.quiet()));
+                }
+            });
+            ui.add_enabled_ui(!view.is_whole(), |ui| {
+                if ui.button("Whole run").clicked() {
+                    view.show_whole();
+                }
+            });
+            for (text, factor) in [("Zoom out", 2.0), ("Zoom in", 0.5)] {
+                if ui.button(text).clicked() {
+                    view.scale(factor, view.cursor, whole);
+                }
+            }
+        });
+    });
+}

@@ -1,0 +1,150 @@
+//! What of the traces is in view.
+
+use std::collections::BTreeSet;
+
+use super::drawn::Drawn;
+
+/// Shortest stretch of time that can be zoomed to, as a share of the run.
+const SHORTEST: f64 = 1e-6;
+
+/// Cursor, zoom and hidden panels.
+pub(crate) struct TraceView {
+    /// The moment that all readings are taken at, s.
+    pub(crate) cursor: f64,
+    /// The stretch in view, s; `None` for the whole run.
+    zoom: Option<(f64, f64)>,
+    /// Whether the value axes follow what is in view.
+    pub(crate) follow: bool,
+    /// Where a stretch to zoom to was begun, s.
+    pub(crate) selecting: Option<f64>,
+    hidden: BTreeSet<String>,
+    pub(super) drawn: Option<Drawn>,
+}
+
+impl Default for TraceView {
+    fn default() -> Self {
+        Self {
+            cursor: 0.0,
+            zoom: None,
+            follow: true,
+            selecting: None,
+            hidden: BTreeSet::new(),
+            drawn: None,
+        }
+    }
+}
+
+impl TraceView {
+    /// The stretch in view, within the whole run.
+    pub(crate) fn range(&self, whole: (f64, f64)) -> (f64, f64) {
+        let Some((from, to)) = self.zoom else {
+            return whole;
+        };
+        let (from, to) = (from.max(whole.0), to.min(whole.1));
+        if to - from > (whole.1 - whole.0) * SHORTEST * 0.5 {
+            (from, to)
+        } else {
+            whole
+        }
+    }
+
+    /// Whether the whole run is in view.
+    pub(crate) fn is_whole(&self) -> bool {
+        self.zoom.is_none()
+    }
+
+    /// Shows the whole run.
+    pub(crate) fn show_whole(&mut self) {
+        self.zoom = None;
+    }
+
+    /// Shows a stretch; one that covers the run is the whole of it.
+    pub(crate) fn show(&mut self, from: f64, to: f64, whole: (f64, f64)) {
+        let least = (whole.1 - whole.0) * SHORTEST;
+        let (mut from, mut to) = (from.min(to), from.max(to));
+        if to - from < least {
+            let middle = (from + to) / 2.0;
+            (from, to) = (middle - least / 2.0, middle + least / 2.0);
+        }
+        if from <= whole.0 && to >= whole.1 {
+            self.zoom = None;
+        } else {
+            self.zoom = Some((from.max(whole.0), to.min(whole.1)));
+        }
+    }
+
+    /// Makes the stretch in view longer (`factor` above 1) or shorter around `around`, s.
+    pub(crate) fn scale(&mut self, factor: f64, around: f64, whole: (f64, f64)) {
+        let (from, to) = self.range(whole);
+        let from = around - (around - from) * factor;
+        let to = around + (to - around) * factor;
+        self.show(from, to, whole);
+    }
+
+    /// Moves the stretch in view by a share of its length.
+    pub(crate) fn pan(&mut self, share: f64, whole: (f64, f64)) {
+        let (from, to) = self.range(whole);
+        let way = (share * (to - from)).clamp(whole.0 - from, whole.1 - to);
+        if !self.is_whole() {
+            self.show(from + way, to + way, whole);
+        }
+    }
+
+    /// Puts the cursor to a moment and brings it into view.
+    pub(crate) fn jump(&mut self, time: f64, whole: (f64, f64)) {
+        self.cursor = time.clamp(whole.0, whole.1);
+        let (from, to) = self.range(whole);
+        if self.cursor < from || self.cursor > to {
+            let half = (to - from) / 2.0;
+            let from = (self.cursor - half).clamp(whole.0, whole.1 - 2.0 * half);
+            self.show(from, from + 2.0 * half, whole);
+        }
+    }
+
+    /// Whether a panel is shown.
+    pub(crate) fn shows(&self, label: &str) -> bool {
+        !self.hidden.contains(label)
+    }
+
+    /// Shows or hides a panel.
+    pub(crate) fn set_shown(&mut self, label: &str, shown: bool) {
+        if shown {
+            self.hidden.remove(label);
+        } else {
+            self.hidden.insert(label.to_owned());
+        }
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    const WHOLE: (f64, f64) = (0.0, 10.0);
+
+    #[test]
+    fn zoom_stays_within_the_run() {
+        let mut view = TraceView::default();
+        view.scale(0.5, 2.0, WHOLE);
+        assert_eq!(view.range(WHOLE), (1.0, 6.0), "half of it around 2 s");
+        view.pan(2.0, WHOLE);
+        assert_eq!(view.range(WHOLE), (5.0, 10.0), "held at the end");
+        view.scale(4.0, 7.0, WHOLE);
+        assert!(view.is_whole(), "not beyond the run");
+        view.show(3.0, 3.0, WHOLE);
+        let (from, to) = view.range(WHOLE);
+        assert!(to > from && to - from < 1e-3, "{from} to {to}");
+    }
+
+    #[test]
+    fn a_jump_brings_the_moment_into_view() {
+        let mut view = TraceView::default();
+        view.show(1.0, 3.0, WHOLE);
+        view.jump(9.5, WHOLE);
+        let (from, to) = view.range(WHOLE);
+        assert!(from <= 9.5 && 9.5 <= to, "{from} to {to}");
+        assert!((to - from - 2.0).abs() < 1e-12, "as long as before");
+        view.jump(99.0, WHOLE);
+        assert!((view.cursor - 10.0).abs() < 1e-12, "within the run");
+    }
+}

@@ -1,0 +1,8 @@
+//! The window, driven by the names of its controls, without display and GPU.
+
+mod cpu_renderer;
+mod editing;
+mod files;
+mod looks;
+mod rig;
+mod verdicts;

@@ -1,0 +1,138 @@
+//! A window to test.
+
+use std::time::{Duration, Instant};
+
+use egui::accesskit::Role;
+use egui::{Key, Modifiers};
+use egui_kittest::Harness;
+use egui_kittest::kittest::Queryable;
+use helmsplit_app::{Appearance, Document, HelmsplitApp, Settings};
+use helmsplit_scenario::presets::Preset;
+use helmsplit_scenario::{ParameterId, UnitSystem};
+
+use crate::cpu_renderer::CpuRenderer;
+
+/// A solve that takes longer than this on any machine is stuck.
+const PATIENCE: Duration = Duration::from_secs(120);
+
+pub(crate) struct Rig {
+    pub(crate) harness: Harness<'static, HelmsplitApp>,
+}
+
+impl Rig {
+    /// The orchard carrier, solved, in a usual window.
+    pub(crate) fn new() -> Self {
+        Self::with([1280.0, 800.0], Appearance::Light, "orchard carrier")
+    }
+
+    pub(crate) fn with(size: [f32; 2], appearance: Appearance, preset: &str) -> Self {
+        let preset = Preset::from_key(preset).expect("a preset of that name");
+        let document = Document::from_preset(&preset).expect("presets read");
+        let settings = Settings {
+            appearance,
+            units: UnitSystem::Metric,
+            scale: 100,
+        };
+        let harness = Harness::builder()
+            .with_size(size)
+            .renderer(CpuRenderer::default())
+            .build_eframe(move |creation| {
+                HelmsplitApp::with_settings(&creation.egui_ctx, document, settings)
+                    .expect("a window")
+            });
+        let mut rig = Self { harness };
+        rig.solve();
+        rig
+    }
+
+    pub(crate) fn app(&self) -> &HelmsplitApp {
+        self.harness.state()
+    }
+
+    /// Waits until the present circuit is solved at full accuracy.
+    pub(crate) fn solve(&mut self) {
+        let begun = Instant::now();
+        loop {
+            self.harness.step();
+            if self.app().is_up_to_date() && !self.app().document().in_gesture() {
+                break;
+            }
+            assert!(
+                begun.elapsed() < PATIENCE,
+                "not solved: {:?}",
+                self.app().failure()
+            );
+            std::thread::sleep(Duration::from_millis(2));
+        }
+        self.settle();
+    }
+
+    /// A few frames more, for what opens and closes.
+    pub(crate) fn settle(&mut self) {
+        self.harness.run_steps(4);
+    }
+
+    pub(crate) fn click(&mut self, label: &str) {
+        self.harness.get_by_label(label).click();
+        self.settle();
+    }
+
+    /// Opens a menu and clicks an entry that begins with `entry`.
+    pub(crate) fn menu(&mut self, menu: &str, entry: &str) {
+        self.click(menu);
+        self.click_beginning(entry);
+    }
+
+    /// Clicks the one control whose name begins so.
+    pub(crate) fn click_beginning(&mut self, beginning: &str) {
+        let wanted = beginning.to_owned();
+        self.harness
+            .get_by(move |node| {
+                node.role() != Role::Label
+                    && node.label().is_some_and(|label| label.starts_with(&wanted))
+            })
+            .click();
+        self.settle();
+    }
+
+    /// Types a value into the field of a parameter and presses Enter.
+    pub(crate) fn enter(&mut self, label: &str, text: &str) {
+        self.harness
+            .get_by_role_and_label(Role::TextInput, label)
+            .focus();
+        self.settle();
+        self.harness.key_press_modifiers(Modifiers::COMMAND, Key::A);
+        self.settle();
+        self.harness
+            .get_by_role_and_label(Role::TextInput, label)
+            .type_text(text);
+        self.settle();
+        self.harness.key_press(Key::Enter);
+        self.settle();
+    }
+
+    /// The value of a parameter as the circuit file writes it.
+    pub(crate) fn text_of(&self, path: &str) -> String {
+        let id = ParameterId::from_path(path).expect("a parameter");
+        self.app().document().scenario().value(id).text()
+    }
+
+    /// Whether the name or value of something on the screen holds the text.
+    pub(crate) fn says(&self, text: &str) -> bool {
+        let text = text.to_owned();
+        let holds = move |found: Option<String>| found.is_some_and(|found| found.contains(&text));
+        self.harness
+            .query_all_by(move |node| holds(node.label()) || holds(node.value()))
+            .next()
+            .is_some()
+    }
+
+    /// Some value of each line at one moment, to tell runs apart.
+    pub(crate) fn fingerprint(&self) -> Vec<f64> {
+        let panels = self.app().figure().panels.iter();
+        let series = panels.flat_map(|panel| &panel.series);
+        series
+            .map(|series| series.points.iter().map(|point| point[1]).sum::<f64>())
+            .collect()
+    }
+}
