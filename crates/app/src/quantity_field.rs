@@ -8,12 +8,11 @@ use helmsplit_scenario::convert::display_unit;
 use helmsplit_scenario::quantity_text::{Digits, number_from_si, parse};
 use helmsplit_scenario::units::{Unit, all_units};
 use helmsplit_scenario::{Findings, Parameter, ParameterId, Scenario, Severity, UnitSystem};
-use helmsplit_view::unit_text;
 
 use crate::action::Action;
 use crate::command::{Command, Stage};
 use crate::look::{Look, SMALL};
-use crate::text::{real_minus, with_unit};
+use crate::text::{real_minus, unit_label, with_unit};
 
 /// Digits of a number at rest.
 const DIGITS: u32 = 7;
@@ -24,9 +23,9 @@ const STEP_TRAVEL: f32 = 4.0;
 /// Steps across the usual range, about.
 const STEPS: f64 = 100.0;
 
-const TEXT_WIDTH: f32 = 76.0;
-const UNIT_WIDTH: f32 = 66.0;
-const RESET_WIDTH: f32 = 44.0;
+const TEXT_WIDTH: f32 = 72.0;
+const UNIT_WIDTH: f32 = 54.0;
+const RESET_WIDTH: f32 = 32.0;
 
 /// What all fields share between frames.
 #[derive(Debug, Default)]
@@ -82,7 +81,7 @@ pub(crate) fn quantity_field(
     };
     ui.horizontal(|ui| {
         ui.spacing_mut().item_spacing.x = 4.0;
-        let room = ui.available_width() - TEXT_WIDTH - UNIT_WIDTH - RESET_WIDTH - 16.0;
+        let room = ui.available_width() - TEXT_WIDTH - UNIT_WIDTH - RESET_WIDTH - 14.0;
         let label = field.label(ui, room.max(80.0), states, actions);
         field.number(ui, label, states, actions);
         field.unit(ui);
@@ -237,7 +236,7 @@ impl Field<'_> {
     }
 
     fn unit(&self, ui: &mut Ui) {
-        let text = RichText::new(unit_text(self.unit)).color(self.context.look.quiet());
+        let text = RichText::new(unit_label(self.unit)).color(self.context.look.quiet());
         let height = ui.spacing().interact_size.y;
         ui.allocate_ui_with_layout(
             vec2(UNIT_WIDTH, height),
@@ -323,7 +322,7 @@ impl Field<'_> {
         let same: Vec<_> = all_units()
             .iter()
             .filter(|unit| unit.quantity() == row.quantity && !unit.is_bare())
-            .map(unit_text)
+            .map(unit_label)
             .collect();
         if same.len() > 1 {
             ui.weak(format!("Type any of {}.", same.join(", ")));

@@ -13,10 +13,10 @@ use crate::text::on_screen;
 use crate::traces::{Shown, TraceView, traces};
 
 /// Narrowest and widest pane of parts, points.
-const PARTS_WIDTH: std::ops::RangeInclusive<f32> = 330.0..=520.0;
+const PARTS_WIDTH: std::ops::RangeInclusive<f32> = 340.0..=560.0;
 
 /// Narrowest and widest pane of evidence, points.
-const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 320.0..=520.0;
+const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
 
 /// What the page shows.
 pub(crate) struct Page<'a> {
@@ -45,7 +45,7 @@ pub(crate) fn response_page(
         .inner_margin(Margin::symmetric(10, 6));
     Panel::left("parts")
         .frame(frame)
-        .default_size(348.0)
+        .default_size(372.0)
         .size_range(PARTS_WIDTH)
         .show(ui, |ui| {
             part_list(ui, page.selected, &page.fields, actions);
@@ -58,7 +58,7 @@ pub(crate) fn response_page(
     if let Some(check) = open {
         Panel::right("evidence")
             .frame(frame)
-            .default_size(344.0)
+            .default_size(304.0)
             .size_range(EVIDENCE_WIDTH)
             .show(ui, |ui| {
                 evidence(ui, check, &page.fields, states, actions);

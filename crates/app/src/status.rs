@@ -1,7 +1,7 @@
 //! The line at the foot: what the last solve cost and how far it can be trusted.
 
 use egui::{RichText, Ui};
-use helmsplit_view::plot::{number_text, power_text};
+use helmsplit_view::plot::number_text;
 
 use crate::action::Action;
 use crate::document::Document;
@@ -37,7 +37,7 @@ pub(crate) fn status_line(ui: &mut Ui, status: &StatusLine<'_>, actions: &mut Ve
             .answer
             .and_then(|answer| answer.solved.run.audit.as_ref())
         {
-            let share = |relative: f64| on_screen(&power_text(relative));
+            let share = |relative: f64| real_minus(&format!("{relative:.1e}"));
             ui.label(small(format!(
                 "Volume audit {}",
                 share(audit.volume.relative)

@@ -21,10 +21,18 @@ pub(crate) fn on_screen(text: &str) -> String {
     text.replace(NARROW_SPACE, "\u{a0}")
 }
 
+/// The symbol of a unit.
+pub(crate) fn unit_label(unit: &Unit) -> String {
+    match unit_text(unit) {
+        micro if micro == "um" => "µm".to_owned(),
+        symbol => symbol,
+    }
+}
+
 /// A number with its unit, at most so many significant digits.
 pub(crate) fn with_unit(si: f64, unit: &Unit, digits: u32) -> String {
     let number = real_minus(&number_from_si(si, unit, Digits::Significant(digits)));
-    match unit_text(unit) {
+    match unit_label(unit) {
         symbol if symbol.is_empty() => number,
         symbol => format!("{number}\u{a0}{symbol}"),
     }

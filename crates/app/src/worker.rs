@@ -295,9 +295,14 @@ mod tests {
     #[test]
     fn a_second_solve_starts_from_the_settled_state_of_the_first() {
         let worker = Worker::start(|| ()).unwrap();
-        worker.submit(job(1, Quality::Draft));
+        let settled = |revision, quality| {
+            let mut job = job(revision, quality);
+            job.scenario.set("start.kind", "settled").unwrap();
+            job
+        };
+        worker.submit(settled(1, Quality::Draft));
         let first = wait(&worker).unwrap();
-        worker.submit(job(2, Quality::Final));
+        worker.submit(settled(2, Quality::Final));
         let second = wait(&worker).unwrap();
         let waited = |answer: &Answer| {
             let settled = answer.solved.run.settled.as_ref();

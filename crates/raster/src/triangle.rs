@@ -56,10 +56,18 @@ pub(crate) fn paint(
     let bottom = corners.iter().fold(f32::NEG_INFINITY, |y, c| y.max(c.y));
     let first = first_centre(top).max(clip.y.0);
     let behind = first_centre(bottom).min(clip.y.1);
+    if first >= behind {
+        return;
+    }
     let Some(slopes) = Slopes::of(&corners) else {
         return;
     };
     let solid = flat.then(|| slopes.colour(texture, corners[0].x, corners[0].y));
+    // Feathered edges and washes use one white pixel of the font's texture.
+    let one_texel = corners[1..]
+        .iter()
+        .all(|c| c.values[4..] == corners[0].values[4..])
+        .then(|| texture.sample(corners[0].values[4], corners[0].values[5]));
     for row in first..behind {
         let y = row as f32 + 0.5;
         let Some((left, right)) = crossings(&corners, y) else {
@@ -76,7 +84,11 @@ pub(crate) fn paint(
         } else {
             for (column, pixel) in span.iter_mut().enumerate() {
                 let x = (from + column) as f32 + 0.5;
-                *pixel = over(slopes.colour(texture, x, y), *pixel);
+                let colour = match one_texel {
+                    Some(texel) => slopes.tinted(texel, x, y),
+                    None => slopes.colour(texture, x, y),
+                };
+                *pixel = over(colour, *pixel);
             }
         }
     }
@@ -123,30 +135,38 @@ impl Slopes {
         if area.abs() < 1e-9 {
             return None;
         }
-        let step = |f: &dyn Fn(f32, f32) -> f32| {
-            std::array::from_fn(|i| f(b.values[i] - a.values[i], c.values[i] - a.values[i]) / area)
-        };
+        let to_b: [f32; 6] = std::array::from_fn(|i| (b.values[i] - a.values[i]) / area);
+        let to_c: [f32; 6] = std::array::from_fn(|i| (c.values[i] - a.values[i]) / area);
         let ends = |f: fn(f32, f32) -> f32| {
             std::array::from_fn(|i| f(f(a.values[i], b.values[i]), c.values[i]))
         };
         Some(Self {
             origin: *a,
-            across: step(&|b, c| b * cy - c * by),
-            down: step(&|b, c| c * bx - b * cx),
+            across: std::array::from_fn(|i| to_b[i] * cy - to_c[i] * by),
+            down: std::array::from_fn(|i| to_c[i] * bx - to_b[i] * cx),
             least: ends(f32::min),
             greatest: ends(f32::max),
         })
     }
 
     /// Colour times texture at a point; never beyond what the corners span.
+    #[inline]
     fn colour(&self, texture: &Texture, x: f32, y: f32) -> [f32; 4] {
+        let sample = texture.sample(self.value(4, x, y), self.value(5, x, y));
+        self.tinted(sample, x, y)
+    }
+
+    /// Colour at a point times one texel.
+    #[inline]
+    fn tinted(&self, texel: [f32; 4], x: f32, y: f32) -> [f32; 4] {
+        std::array::from_fn(|i| self.value(i, x, y) * texel[i] / 255.0)
+    }
+
+    #[inline]
+    fn value(&self, i: usize, x: f32, y: f32) -> f32 {
         let (dx, dy) = (x - self.origin.x, y - self.origin.y);
-        let value = |i: usize| {
-            let plane = self.origin.values[i] + self.across[i] * dx + self.down[i] * dy;
-            plane.clamp(self.least[i], self.greatest[i])
-        };
-        let sample = texture.sample(value(4), value(5));
-        std::array::from_fn(|i| value(i) * sample[i] / 255.0)
+        let plane = self.origin.values[i] + self.across[i] * dx + self.down[i] * dy;
+        plane.clamp(self.least[i], self.greatest[i])
     }
 }
 

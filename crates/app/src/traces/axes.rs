@@ -1,6 +1,6 @@
 //! Grid, limits, events, lines and the cursor.
 
-use egui::{Align2, FontId, Painter, Pos2, Rect, Shape, Stroke, StrokeKind, Ui, pos2};
+use egui::{Align2, FontId, Painter, Pos2, Rect, Shape, Stroke, Ui, pos2};
 use helmsplit_view::plot::{Axis, Limit, Where};
 use helmsplit_view::style::Fill;
 
@@ -11,12 +11,11 @@ use crate::look::{SMALL, egui_colour, egui_wash};
 use crate::text::on_screen;
 
 /// Names of limits closer than this to one another are left out; the line stays.
-const NAME_HEIGHT: f32 = 12.0;
+const NAME_HEIGHT: f32 = 11.0;
 
 /// Paints everything but the cursor.
 pub(super) fn paint(ui: &Ui, shown: &Shown<'_>, drawn: &Drawn, focused: bool) {
     let painter = ui.painter();
-    let plot = drawn.key.plot;
     let ground = egui_colour(shown.look.theme.background);
     for panel in &drawn.panels {
         painter.rect_filled(panel.rect, 0.0, ground);
@@ -27,12 +26,16 @@ pub(super) fn paint(ui: &Ui, shown: &Shown<'_>, drawn: &Drawn, focused: bool) {
         }
         let clipped = painter.with_clip_rect(panel.rect.expand(1.0).intersect(ui.clip_rect()));
         clipped.extend(panel.shapes.iter().cloned());
+        if let Some(axis) = &panel.axis {
+            let limits = &shown.figure.panels[panel.place].limits;
+            limit_names(painter, shown, limits, axis, panel.rect);
+        }
     }
     time_axis(painter, shown, drawn);
     marks(painter, shown, drawn);
-    if focused {
-        let ring = Stroke::new(1.5, shown.look.accent());
-        painter.rect_stroke(plot.expand(2.0), 2.0, ring, StrokeKind::Outside);
+    if let Some(last) = drawn.panels.last().filter(|_| focused) {
+        let foot = Stroke::new(2.5, shown.look.accent());
+        painter.hline(last.rect.x_range(), last.rect.bottom(), foot);
     }
 }
 
@@ -68,43 +71,67 @@ fn grid(painter: &Painter, shown: &Shown<'_>, drawn: &Drawn, panel: &DrawnPanel)
     painter.vline(rect.left(), rect.y_range(), zero);
 }
 
+/// Where the line of a limit lies, or the middle of its band; `None` out of view.
+fn height_of(limit: &Limit, axis: &Axis) -> Option<f32> {
+    match limit.at {
+        Where::Line(value) if axis.contains(value) => Some(axis.position(value) as f32),
+        Where::Band(low, high) if low < axis.high && high > axis.low => {
+            let (top, bottom) = (high.min(axis.high), low.max(axis.low));
+            Some(f64::midpoint(axis.position(top), axis.position(bottom)) as f32)
+        }
+        _ => None,
+    }
+}
+
 fn paint_limits(painter: &Painter, shown: &Shown<'_>, limits: &[Limit], axis: &Axis, rect: Rect) {
     let theme = &shown.look.theme;
     let stroke = Stroke::new(theme.strokes.limit as f32, egui_colour(theme.rules.limit));
-    let mut names: Vec<f32> = Vec::new();
     for limit in limits {
-        let at = match limit.at {
-            Where::Line(value) if axis.contains(value) => {
-                let y = axis.position(value) as f32;
+        let Some(y) = height_of(limit, axis) else {
+            continue;
+        };
+        match limit.at {
+            Where::Line(_) => {
                 let ends = [pos2(rect.left(), y), pos2(rect.right(), y)];
                 painter.extend(Shape::dashed_line(&ends, stroke, 6.0, 4.0));
-                y
             }
-            Where::Band(low, high) if low < axis.high && high > axis.low => {
+            Where::Band(low, high) => {
                 let top = axis.position(high.min(axis.high)) as f32;
                 let bottom = axis.position(low.max(axis.low)) as f32;
                 let band = Rect::from_min_max(pos2(rect.left(), top), pos2(rect.right(), bottom));
                 painter.rect_filled(band, 0.0, egui_wash(theme.wash(Fill::Band)));
-                f32::midpoint(top, bottom) + 6.0
             }
-            _ => continue,
-        };
-        // Above the line, unless that is outside.
-        let y = if at - NAME_HEIGHT < rect.top() {
-            at + NAME_HEIGHT
-        } else {
-            at - 1.0
-        };
-        if names.iter().all(|other| (other - y).abs() >= NAME_HEIGHT) {
-            painter.text(
-                pos2(rect.right() - 4.0, y),
-                Align2::RIGHT_BOTTOM,
-                &limit.label,
-                FontId::proportional(SMALL),
-                shown.look.quiet(),
-            );
-            names.push(y);
         }
+    }
+}
+
+/// Names of limits over the lines, on a ground of their own.
+fn limit_names(painter: &Painter, shown: &Shown<'_>, limits: &[Limit], axis: &Axis, rect: Rect) {
+    let ground = egui_colour(shown.look.theme.background).gamma_multiply(0.8);
+    let mut names: Vec<f32> = Vec::new();
+    for limit in limits {
+        let Some(at) = height_of(limit, axis) else {
+            continue;
+        };
+        let galley = painter.layout_no_wrap(
+            limit.label.clone(),
+            FontId::proportional(SMALL),
+            shown.look.quiet(),
+        );
+        // Above the line, in the middle of a band; below the line where above is outside.
+        let top = match limit.at {
+            Where::Band(..) => at - NAME_HEIGHT / 2.0,
+            Where::Line(_) if at - NAME_HEIGHT < rect.top() => at + 1.0,
+            Where::Line(_) => at - NAME_HEIGHT - 2.0,
+        };
+        if names.iter().any(|other| (other - top).abs() < NAME_HEIGHT) {
+            continue;
+        }
+        names.push(top);
+        let left = rect.right() - 4.0 - galley.size().x;
+        let place = Rect::from_min_size(pos2(left, top), galley.size());
+        painter.rect_filled(place, 0.0, ground);
+        painter.galley(place.min, galley, shown.look.quiet());
     }
 }
 

@@ -21,7 +21,7 @@ use drawn::{Drawn, Key};
 /// Room for the numbers of the value axes, points.
 const LEFT: f32 = 52.0;
 /// Room for names and values, points.
-const RIGHT: f32 = 216.0;
+const RIGHT: f32 = 204.0;
 /// Room for the names of events, points.
 const TOP: f32 = 18.0;
 /// Room for the numbers of the time axis, points.

@@ -16,15 +16,23 @@ const ROW: f32 = 14.0;
 /// Length of the sample of a line, points.
 const SAMPLE: f32 = 26.0;
 
+/// Letters of a name that leave room for a value beside it.
+const LONGEST: usize = 20;
+
 /// Height that the names of a panel need, points.
 pub(super) fn height(panel: &Panel) -> f32 {
-    let title = usize::from(!is_single(panel));
+    let title = usize::from(!is_single(panel) || is_long(&panel.label));
     (panel.series.len() + title) as f32 * ROW + 2.0
 }
 
 /// Whether the one line of a panel has the panel's name.
 fn is_single(panel: &Panel) -> bool {
     matches!(&panel.series[..], [only] if only.label == panel.label)
+}
+
+/// Whether a name leaves no room for a value beside it.
+fn is_long(label: &str) -> bool {
+    label.chars().count() > LONGEST
 }
 
 /// The value of a line at a time, between its points; `None` outside and in a gap.
@@ -113,6 +121,9 @@ fn rows(
             font.clone(),
             look.ink(),
         );
+        if single && is_long(&series.label) {
+            y += ROW;
+        }
         let text = if single {
             format!("{value} {unit}")
         } else {
