@@ -21,7 +21,7 @@ use drawn::{Drawn, Key};
 /// Room for the numbers of the value axes, points.
 const LEFT: f32 = 52.0;
 /// Room for names and values, points.
-const RIGHT: f32 = 204.0;
+const RIGHT: f32 = 216.0;
 /// Room for the names of events, points.
 const TOP: f32 = 18.0;
 /// Room for the numbers of the time axis, points.
@@ -29,7 +29,7 @@ const FOOT: f32 = 22.0;
 /// Between panels, points.
 const GAP: f32 = 8.0;
 /// Least height of a panel of weight 1, points.
-const LEAST: f32 = 58.0;
+const LEAST: f32 = 44.0;
 
 /// What the traces show.
 pub(crate) struct Shown<'a> {
@@ -96,15 +96,21 @@ pub(crate) fn traces(ui: &mut Ui, shown: &Shown<'_>, view: &mut TraceView) {
 
 /// Heights of the panels: by weight, but high enough for the names beside them.
 fn heights(figure: &Figure, panels: &[usize], room: f32) -> Vec<f32> {
-    let weights: f32 = panels
-        .iter()
-        .map(|&place| figure.panels[place].weight as f32)
-        .sum();
-    let gaps = GAP * panels.len() as f32;
-    let unit = ((room - TOP - FOOT - gaps) / weights.max(0.1)).max(LEAST);
-    let height = |&place: &usize| {
+    let room = room - TOP - FOOT - GAP * panels.len() as f32;
+    let height = |place: usize, unit: f32| {
         let panel = &figure.panels[place];
         (unit * panel.weight as f32).max(readout::height(panel))
     };
-    panels.iter().map(height).collect()
+    let all = |unit: f32| panels.iter().map(move |&place| height(place, unit));
+    // The sum rises with the unit: halve the interval until it fits to the point.
+    let (mut low, mut high) = (LEAST, room.max(LEAST) * 4.0);
+    for _ in 0..16 {
+        let middle = f32::midpoint(low, high);
+        if all(middle).sum::<f32>() > room {
+            high = middle;
+        } else {
+            low = middle;
+        }
+    }
+    all(low).map(f32::floor).collect()
 }
