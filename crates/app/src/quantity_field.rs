@@ -148,7 +148,8 @@ impl Field<'_> {
 
     fn number(&self, ui: &mut Ui, label: Id, states: &mut FieldStates, actions: &mut Vec<Action>) {
         let id = self.row.id;
-        let field_id = Id::unique(("quantity field", self.row.path));
+        // The same limit may stand on its card and beside the evidence.
+        let field_id = ui.make_persistent_id(("quantity field", self.row.path));
         let focused = ui.memory(|memory| memory.has_focus(field_id));
         if focused {
             self.nudges(ui, states, actions);

@@ -16,9 +16,42 @@ pub(crate) fn real_minus(text: &str) -> String {
     text.replace('-', &MINUS.to_string())
 }
 
-/// The letters that the window's font has: the narrow space becomes a no-break space.
+/// Raised digits and minus, and what they are.
+const RAISED: [(char, char); 11] = [
+    ('⁻', MINUS),
+    ('⁰', '0'),
+    ('¹', '1'),
+    ('²', '2'),
+    ('³', '3'),
+    ('⁴', '4'),
+    ('⁵', '5'),
+    ('⁶', '6'),
+    ('⁷', '7'),
+    ('⁸', '8'),
+    ('⁹', '9'),
+];
+
+/// The letters that the window's font has: the narrow space becomes a no-break space, and a power
+/// of ten is written with a caret.
 pub(crate) fn on_screen(text: &str) -> String {
-    text.replace(NARROW_SPACE, "\u{a0}")
+    let text = text.replace(NARROW_SPACE, "\u{a0}");
+    let mut parts = text.split("×10");
+    let mut out = parts.next().unwrap_or_default().to_owned();
+    for part in parts {
+        out.push_str("×10");
+        let plain = |letter: char| RAISED.iter().find(|(raised, _)| *raised == letter);
+        let power: String = part
+            .chars()
+            .map_while(plain)
+            .map(|(_, plain)| *plain)
+            .collect();
+        if !power.is_empty() {
+            out.push('^');
+            out.push_str(&power);
+        }
+        out.extend(part.chars().skip(power.chars().count()));
+    }
+    out
 }
 
 /// The symbol of a unit.
@@ -68,4 +101,25 @@ pub(crate) fn limit(check: &Check, units: UnitSystem) -> Option<String> {
 /// The name of a check as words.
 pub(crate) fn check_name(id: CheckId) -> String {
     id.name().replace('-', " ")
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn powers_of_ten_are_written_with_letters_of_the_font() {
+        for (text, shown) in [
+            (
+                "volume closes to 2.9×10⁻⁷ of",
+                "volume closes to 2.9×10^−7 of",
+            ),
+            ("×10⁶ Pa", "×10^6 Pa"),
+            ("30 mm²", "30 mm²"),
+            ("16\u{202f}219", "16\u{a0}219"),
+            ("2×10 m", "2×10 m"),
+        ] {
+            assert_eq!(on_screen(text), shown, "{text}");
+        }
+    }
 }

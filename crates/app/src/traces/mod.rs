@@ -70,8 +70,9 @@ pub(crate) fn traces(ui: &mut Ui, shown: &Shown<'_>, view: &mut TraceView) {
             }
             let id = ui.scope_id().with("trace area");
             let response = ui.interact(plot, id, Sense::click_and_drag());
-            response
-                .widget_info(|| WidgetInfo::labeled(egui::Role::GraphicsDocument, true, "Traces"));
+            response.widget_info(|| {
+                WidgetInfo::labeled(egui::Role::GraphicsDocument, true, "Traces over time")
+            });
             input::take(ui, &response, plot, whole, view);
             let range = view.range(whole);
             let key = Key {

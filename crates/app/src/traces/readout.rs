@@ -92,7 +92,7 @@ fn rows(
         .map_or((0, 2), |axis| (axis.ticks.exponent, axis.ticks.places + 1));
     let unit = match exponent {
         0 => panel.unit.clone(),
-        power => format!("×10{} {}", superscript(power), panel.unit),
+        power => on_screen(&format!("×10{} {}", superscript(power), panel.unit)),
     };
     let look = shown.look;
     let font = FontId::proportional(SMALL);
