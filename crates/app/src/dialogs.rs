@@ -88,10 +88,11 @@ fn ask_path(ui: &mut Ui, path: &mut String, label: &str, button: &str, actions: 
     let response = ui
         .add(TextEdit::singleline(path).id(field).desired_width(460.0))
         .labelled_by(label.id);
+    // Asked first: a field that takes the focus back has not lost it.
+    let entered = response.lost_focus() && ui.input(|input| input.key_pressed(Key::Enter));
     if ui.memory(|memory| memory.focused().is_none()) {
         response.request_focus();
     }
-    let entered = response.lost_focus() && ui.input(|input| input.key_pressed(Key::Enter));
     ui.add_space(8.0);
     ui.horizontal(|ui| {
         let named = !path.trim().is_empty();

@@ -25,7 +25,7 @@ impl Appearance {
 }
 
 /// Scales to choose from, per cent.
-pub const SCALES: [u16; 7] = [80, 90, 100, 125, 150, 175, 200];
+pub(crate) const SCALES: [u16; 7] = [80, 90, 100, 125, 150, 175, 200];
 
 /// What the user prefers.
 #[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
@@ -51,7 +51,7 @@ impl Default for Settings {
 
 /// The name of a unit system in the menu.
 #[must_use]
-pub fn units_name(units: UnitSystem) -> &'static str {
+pub(crate) fn units_name(units: UnitSystem) -> &'static str {
     match units {
         UnitSystem::Metric => "Metric: bar, L/min, mm",
         UnitSystem::Us => "US: psi, gpm, in",

@@ -7,6 +7,7 @@ use helmsplit_scenario::Severity;
 use crate::rig::Rig;
 
 const ORIFICE: &str = "valve.fixed_orifice_diameter";
+const SPOOL: &str = "valve.spool_diameter";
 
 #[test]
 fn it_opens_on_a_solved_circuit() {
@@ -109,12 +110,12 @@ fn arrow_keys_step_a_value_and_one_undo_takes_all_steps_back() {
 #[test]
 fn dragging_a_name_drags_its_value() {
     let mut rig = Rig::new();
-    let before = rig.text_of(ORIFICE);
+    let before = rig.text_of(SPOOL);
     let at = {
         let nodes = rig
             .harness
-            .query_all_by_value("Fixed orifice diameter")
-            .chain(rig.harness.query_all_by_label("Fixed orifice diameter"));
+            .query_all_by_value("Spool diameter")
+            .chain(rig.harness.query_all_by_label("Spool diameter"));
         let label = nodes
             .into_iter()
             .map(|node| node.rect())
@@ -129,7 +130,7 @@ fn dragging_a_name_drags_its_value() {
         rig.harness.hover_at(at + egui::vec2(x, 0.0));
         rig.settle();
     }
-    let dragged = rig.text_of(ORIFICE);
+    let dragged = rig.text_of(SPOOL);
     assert_ne!(dragged, before, "it follows the pointer");
     assert_eq!(
         rig.app().document().undo_name(),

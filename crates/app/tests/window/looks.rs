@@ -51,7 +51,7 @@ fn screenshots() {
     for (size, [width, height]) in [("small", [1280.0, 720.0]), ("large", [1920.0, 1080.0])] {
         for (name, appearance) in [("light", Appearance::Light), ("dark", Appearance::Dark)] {
             let mut rig = Rig::with([width, height], appearance, "orchard carrier");
-            let mut shoot = |rig: &mut Rig, page: &str| {
+            let shoot = |rig: &mut Rig, page: &str| {
                 let picture = rig.harness.render().expect("a picture");
                 let path = format!("{folder}/{page}-{size}-{name}.png");
                 picture.save(&path).expect("written");

@@ -35,6 +35,7 @@ impl Rig {
         };
         let harness = Harness::builder()
             .with_size(size)
+            .with_step_dt(1.0 / 60.0)
             .renderer(CpuRenderer::default())
             .build_eframe(move |creation| {
                 HelmsplitApp::with_settings(&creation.egui_ctx, document, settings)
