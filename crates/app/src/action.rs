@@ -40,5 +40,5 @@ pub(crate) enum Action {
     /// Close the window.
     Quit,
     /// Do this although changes are not saved.
-    Discarding(Box<Action>),
+    Discarding(Box<Self>),
 }

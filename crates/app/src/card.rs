@@ -160,7 +160,7 @@ fn choice_menu(
 /// Findings about the part that belong to none of its fields.
 fn general_remarks(ui: &mut Ui, part: Part, context: &FieldContext<'_>) {
     let shown = part.used(context.scenario);
-    for finding in context.findings.iter() {
+    for finding in context.findings {
         let has_field = shown.iter().any(|row| row.path == finding.path);
         if has_field || Part::of(&finding.path) != Some(part) {
             continue;
