@@ -200,6 +200,8 @@ impl Look {
             widget.corner_radius = CornerRadius::same(3);
             widget.expansion = 0.0;
         }
+        // A control at rest has an outline that shows on its ground.
+        visuals.widgets.inactive.bg_stroke = Stroke::new(1.0, egui_colour(self.theme.rules.zero));
         visuals.widgets.hovered.bg_stroke = Stroke::new(1.0, self.quiet());
         visuals.widgets.active.bg_stroke = Stroke::new(1.5, self.accent());
         visuals

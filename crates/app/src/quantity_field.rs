@@ -109,6 +109,7 @@ impl Field<'_> {
     ) -> Id {
         let text = egui::Label::new(self.row.label)
             .truncate()
+            .selectable(false)
             .sense(Sense::drag());
         let height = ui.spacing().interact_size.y;
         let response = ui

@@ -27,7 +27,7 @@ const TOP: f32 = 18.0;
 /// Room for the numbers of the time axis, points.
 const FOOT: f32 = 22.0;
 /// Between panels, points.
-const GAP: f32 = 8.0;
+const GAP: f32 = 13.0;
 /// Least height of a panel of weight 1, points.
 const LEAST: f32 = 44.0;
 
