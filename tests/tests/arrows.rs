@@ -6,22 +6,27 @@ use std::process::Command;
 use cargo_metadata::{DependencyKind, Metadata, MetadataCommand, PackageId};
 
 /// Our crates in their order; a crate may use any before it. A new crate finds its place here.
-const ORDER: [&str; 8] = [
+const ORDER: [&str; 10] = [
     "helmsplit-model",
     "helmsplit-scenario",
     "helmsplit-sim",
     "helmsplit-study",
     "helmsplit-view",
+    "helmsplit-raster",
+    "helmsplit-app",
     "helmsplit-cli",
     "helmsplit",
     "helmsplit-acceptance",
 ];
 
 /// Outside crates that name a decision which must stay in few hands, and who may depend on them
-/// directly: the solver in `sim` alone, argument parsing in `cli` alone.
-const RESERVED: [(&str, &[&str]); 2] = [
+/// directly: the solver in `sim` alone, argument parsing in `cli` alone, windows in `app` alone,
+/// which the command line never sees.
+const RESERVED: [(&str, &[&str]); 4] = [
     ("diffsol", &["helmsplit-sim"]),
     ("clap", &["helmsplit-cli"]),
+    ("eframe", &["helmsplit-app"]),
+    ("helmsplit-app", &["helmsplit"]),
 ];
 
 /// The platform that the tests run on, as cargo names it.
