@@ -54,7 +54,7 @@ pub(crate) enum Command {
 pub(crate) struct CircuitArguments {
     /// Circuit file, or the name of a preset
     pub(crate) file: PathBuf,
-    /// Set a value: valve.fixed_orifice_diameter="3.5 mm", excess.kind="tank"; may be repeated
+    /// Set a value, such as `valve.fixed_orifice_diameter="3.5 mm"` or `excess.kind=tank`; may be repeated
     #[arg(long = "set", value_name = "PATH=VALUE")]
     pub(crate) set: Vec<String>,
     /// Start the run from: settled, cold, or a state file written by --save-state
@@ -91,7 +91,7 @@ pub(crate) struct RunArguments {
 
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
 pub(crate) enum RowChoice {
-    /// One row each solver.output_step
+    /// One row each `solver.output_step`
     Grid,
     /// One row each step of the solver
     Steps,
