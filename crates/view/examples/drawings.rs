@@ -7,7 +7,7 @@ use helmsplit_scenario::presets::PRESETS;
 use helmsplit_sim::{SolverOptions, Watch};
 use helmsplit_study::solve;
 use helmsplit_view::diagram::DrawingOptions;
-use helmsplit_view::{BuiltInTheme, Moment, circuit_scene, svg_from_scene};
+use helmsplit_view::{BuiltInTheme, Moment, circuit_scene, svg_from_scene, valve_scene};
 
 fn main() -> Result<(), Box<dyn std::error::Error>> {
     let mut arguments = std::env::args().skip(1);
@@ -29,6 +29,9 @@ fn main() -> Result<(), Box<dyn std::error::Error>> {
             let scene = circuit_scene(&solved.circuit, moment, DrawingOptions::default());
             let svg = svg_from_scene(&scene, &theme, "circuit");
             std::fs::write(folder.join(format!("{}-{name}.svg", preset.key)), svg)?;
+            let scene = valve_scene(&solved.circuit, moment, None, DrawingOptions::default());
+            let svg = svg_from_scene(&scene, &theme, "valve");
+            std::fs::write(folder.join(format!("{}-valve-{name}.svg", preset.key)), svg)?;
         }
     }
     Ok(())

@@ -22,7 +22,12 @@ fn main() -> Result<(), Box<dyn std::error::Error>> {
         let scenario = preset
             .scenario()
             .map_err(|findings| format!("{}: {findings}", preset.key))?;
-        let solved = solve(&scenario, None, &SolverOptions::from(&scenario.solver()), &mut Watch::none())?;
+        let solved = solve(
+            &scenario,
+            None,
+            &SolverOptions::from(&scenario.solver()),
+            &mut Watch::none(),
+        )?;
         let figure = solved_figure(&scenario, &solved, UnitSystem::Metric);
         let svg = svg_from_figure(&figure, &SvgOptions::new(&theme));
         std::fs::write(folder.join(format!("{}.svg", preset.key)), svg)?;

@@ -17,6 +17,7 @@
 
 mod colour;
 pub mod diagram;
+pub mod drawing;
 mod error;
 pub mod figures;
 mod moment;
@@ -33,6 +34,7 @@ mod unit_text;
 
 pub use colour::{Colour, ColourError};
 pub use diagram::circuit_scene;
+pub use drawing::valve_scene;
 pub use error::ViewError;
 pub use moment::Moment;
 pub use ramp::{PressureScale, Ramp};

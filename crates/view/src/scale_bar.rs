@@ -4,7 +4,7 @@ use helmsplit_model::Quantity;
 use helmsplit_scenario::UnitSystem;
 use kurbo::{Rect, Shape};
 
-use crate::plot::number_text;
+use crate::plot::{number_text, power_text};
 use crate::ramp::PressureScale;
 use crate::scene::{Anchor, Line, Paint, Part, PartPen, Stroke, Tone};
 use crate::style::TextSize;
@@ -20,6 +20,9 @@ const FIELDS: u32 = 48;
 /// Numbers below the bar stand this far apart, Pa; twice as far on long scales.
 const INTERVAL: f64 = 50e5;
 const MOST_INTERVALS: f64 = 6.0;
+
+/// From here on numbers have a power of ten.
+const LARGE: f64 = 1e5;
 
 /// The scale with its ends, in the unit of the system; `at` is the left end of the bar.
 pub(crate) fn scale_bar(
@@ -56,10 +59,14 @@ pub(crate) fn scale_bar(
             Stroke::plain(Line::Fine),
         );
         let below = (place.0, place.1 + 14.0);
-        let places = if value.abs() < 20.0 && tick > 0 { 1 } else { 0 };
+        let number = if value < LARGE {
+            number_text(value, usize::from(value < 20.0 && tick > 0))
+        } else {
+            power_text(value)
+        };
         pen.text(
             below,
-            number_text(value, places),
+            number,
             (TextSize::Small, Tone::Quiet),
             Anchor::Middle,
         );

@@ -51,6 +51,7 @@ fn number_of(value: f64, units: UnitSystem) -> String {
 fn with_unit(number: &str, unit: &Unit) -> String {
     match unit_text(unit) {
         symbol if symbol.is_empty() => number.to_owned(),
+        symbol if symbol == "°" => format!("{number}°"),
         symbol => format!("{number} {symbol}"),
     }
 }

@@ -20,6 +20,7 @@ mod tests;
 mod valve;
 
 pub use context::DrawingOptions;
+pub(crate) use context::{size_text, value_text};
 
 use helmsplit_model::{Circuit, ExcessSide, PriorityRelief, SteeringSide};
 

@@ -15,7 +15,13 @@ fn solved(key: &str, seconds: f64) -> (helmsplit_scenario::Scenario, Solved) {
     scenario
         .set("manoeuvre.duration", &format!("{seconds} s"))
         .unwrap();
-    let solved = solve(&scenario, None, &SolverOptions::from(&scenario.solver()), &mut Watch::none()).unwrap();
+    let solved = solve(
+        &scenario,
+        None,
+        &SolverOptions::from(&scenario.solver()),
+        &mut Watch::none(),
+    )
+    .unwrap();
     (scenario, solved)
 }
 

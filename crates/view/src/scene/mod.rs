@@ -5,12 +5,16 @@
 //! into colours. Painters draw the parts in order. Every filled path is one simple polygon without
 //! holes, so that a painter which can only fill triangles has an easy life.
 
+#[cfg(test)]
+mod collisions;
 mod hit;
 mod part_pen;
 mod prim;
 
+#[cfg(test)]
+pub(crate) use collisions::collisions;
 pub use hit::Hit;
-pub(crate) use part_pen::PartPen;
+pub(crate) use part_pen::{LINE_SPACING, PartPen, polygon};
 pub use prim::{Anchor, Line, Paint, Prim, Stroke, Tone};
 
 use kurbo::Rect;
