@@ -84,7 +84,8 @@ impl Sheet<'_> {
             tip: (x, y - up * half).into(),
             direction: Vec2::new(0.0, -up),
             length: 2.0 * half,
-            paint: Paint::Ink,
+            // Light or dark, it stands out against the oil around it.
+            paint: Paint::Ground,
         });
     }
 

@@ -56,7 +56,7 @@ impl Sheet<'_> {
         let (cross, wall, disc) = (s.cross_holes, s.orifice_wall, s.disc);
         let hole = 0.5 * s.fixed_orifice;
         // A little beyond the outline, so that holes have no lid.
-        let open = 0.8 / self.px_per_mm;
+        let open = 1.2 / self.px_per_mm;
         self.fill_spool(&mut pen, cross, (-neck - open, neck + open), inlet);
         self.fill_spool(&mut pen, (cross.0, wall.0), (-b, b), inlet);
         self.fill_spool(&mut pen, wall, (-hole, hole), inlet);

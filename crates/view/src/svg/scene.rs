@@ -222,3 +222,37 @@ fn path_data(outline: &BezPath) -> String {
     }
     text
 }
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+    use crate::scene::PartPen;
+    use crate::style::TextSize;
+    use crate::theme::BuiltInTheme;
+
+    #[test]
+    fn a_small_scene_as_text() {
+        let mut line = PartPen::new("priority_line", "Line < \"hose\"");
+        let shaded = |line, share| Stroke {
+            line,
+            oil: Some(share),
+        };
+        line.line(&[(0.0, 20.0), (60.0, 20.0)], shaded(Line::Working, 1.0));
+        line.line(&[(30.0, 20.0), (30.0, 50.0)], shaded(Line::Pilot, 0.25));
+        line.junction((30.0, 20.0));
+        let mut pump = PartPen::new("pump", "Pump");
+        pump.circle((85.0, 20.0), 25.0);
+        pump.arrow((85.0, 40.0), (85.0, 2.0));
+        pump.area(
+            &[(120.0, 0.0), (140.0, 0.0), (140.0, 30.0)],
+            Paint::Oil(Some(0.5)),
+            Some(Line::Fine),
+        );
+        let quiet = (TextSize::Small, Tone::Quiet);
+        pump.text((85.0, 62.0), "20 cm³/rev", quiet, Anchor::Middle);
+        let parts = vec![line.done(), pump.done()];
+        let scene = Scene::new("Small & simple".to_owned(), "A pump.".to_owned(), parts);
+        let theme = BuiltInTheme::Light.load().unwrap();
+        insta::assert_snapshot!(svg_from_scene(&scene, &theme, "small"));
+    }
+}
