@@ -29,6 +29,9 @@ const RAIL_X: f64 = 908.0;
 /// Heights of the checks of cap end and rod end.
 const CHECKS: (f64, f64) = (354.0, 406.0);
 
+/// The check of the cap end.
+const CAP_CHECK_X: f64 = 816.0;
+
 /// The cylinder: left, top, right, foot.
 const CYLINDER: (f64, f64, f64, f64) = (788.0, 170.0, 830.0, 332.0);
 
@@ -69,18 +72,25 @@ impl Context<'_> {
         let branch = 610.0;
         pen.line(&[(drain, low), (drain, RETURN_Y)], back);
         pen.line(
-            &[(drain, branch), (RAIL_X, branch), (RAIL_X, CHECKS.0)],
+            &[
+                (drain, branch),
+                (RAIL_X, branch),
+                (RAIL_X, CHECKS.0),
+                (CAP_CHECK_X + CHECK.0, CHECKS.0),
+            ],
             back,
         );
         pen.junction((drain, branch));
         pen.junction((drain, RETURN_Y));
         let cap_x = LIFT_X - PORT;
         for (y, line, at, pressure) in [
-            (CHECKS.0, cap_x, 816.0, "p_cap"),
+            (CHECKS.0, cap_x, CAP_CHECK_X, "p_cap"),
             (CHECKS.1, ROD_X, RAIL_X - 16.0, "p_rod"),
         ] {
             let frame = Frame::new((at, y), LEFT, UP);
-            pen.line(&[(RAIL_X, y), frame.at(-CHECK.0, 0.0)], back);
+            if y > CHECKS.0 {
+                pen.line(&[(RAIL_X, y), frame.at(-CHECK.0, 0.0)], back);
+            }
             let stroke = self.working(pressure);
             pen.line(&[frame.at(CHECK.1, 0.0), (line, y)], stroke);
             check(pen, &frame);

@@ -8,6 +8,9 @@ pub(super) const RETURN_Y: f64 = 690.0;
 /// The return line of the steering side, down the left edge.
 pub(super) const RISER_X: f64 = 30.0;
 
+/// What lies at its top turns the corner this far ahead of it, so that the corner joins.
+pub(super) const RISER_STUB: f64 = 12.0;
+
 /// Prime mover and pump.
 pub(super) const PRIME_MOVER: (f64, f64) = (86.0, 562.0);
 pub(super) const PUMP: (f64, f64) = (166.0, 562.0);

@@ -5,7 +5,7 @@ use helmsplit_model::{ExcessSide, Quantity, ReturnSide, Signal};
 use super::context::Context;
 use super::frame::{Frame, RIGHT, UP};
 use super::places::{
-    CONSUMER_X, EXCESS_RELIEF, LIFT_X, MAIN_RELIEF, RETURN_END_X, RETURN_Y, RISER_X,
+    CONSUMER_X, EXCESS_RELIEF, LIFT_X, MAIN_RELIEF, RETURN_END_X, RETURN_Y, RISER_STUB, RISER_X,
 };
 use super::symbols::{cooler, filter, tank};
 use crate::scene::{Anchor, Part, PartPen};
@@ -27,21 +27,28 @@ impl Context<'_> {
         };
         let mut pen = PartPen::new("return_line", "Return");
         let back = self.working("return");
-        if let Some(top) = riser {
-            pen.line(&[(RISER_X, top), (RISER_X, RETURN_Y)], back);
-        }
+        let mut way = match riser {
+            Some(top) => vec![
+                (RISER_X + RISER_STUB, top),
+                (RISER_X, top),
+                (RISER_X, RETURN_Y),
+            ],
+            None => vec![(start, RETURN_Y)],
+        };
         let x = RETURN_END_X;
         let foot = RETURN_Y + 26.0;
         match self.parts.return_side {
             ReturnSide::Constant(pressure) => {
-                pen.line(&[(start, RETURN_Y), (x, RETURN_Y), (x, foot)], back);
+                way.extend([(x, RETURN_Y), (x, foot)]);
+                pen.line(&way, back);
                 tank(&mut pen, (x, foot));
                 let detail = format!("at {}", self.size(pressure, Quantity::Pressure));
                 pen.label((x + 24.0, foot - 12.0), &detail, Anchor::Start);
             }
             ReturnSide::Restricted { .. } => {
                 let (clean, cool, end) = (x + 30.0, x + 80.0, x + 126.0);
-                pen.line(&[(start, RETURN_Y), (cool, RETURN_Y)], back);
+                way.push((cool, RETURN_Y));
+                pen.line(&way, back);
                 let last = self.working("tank");
                 pen.line(&[(cool, RETURN_Y), (end, RETURN_Y), (end, foot)], last);
                 filter(&mut pen, &Frame::new((clean, RETURN_Y), RIGHT, UP));

@@ -6,7 +6,7 @@ use std::f64::consts::TAU;
 
 use super::context::Context;
 use super::frame::{DOWN, Frame, LEFT, RIGHT, UP};
-use super::places::{PRIORITY_X, RISER_X};
+use super::places::{PRIORITY_X, RISER_STUB, RISER_X};
 use super::symbols::{
     CHECK, MACHINE, POSITION, RELIEF, SPRING, adjustable, check, load, motor, on_off, relief,
     shaft, tank, throttle,
@@ -125,7 +125,10 @@ impl Context<'_> {
         let (inside, back) = (self.working("p_pm"), self.working("return"));
         let branch = x + 76.0;
         pen.line(&[(x, valve_y - POSITION), (x, y + MACHINE)], inside);
-        pen.line(&[(x, y - MACHINE), (x, top), (RISER_X, top)], back);
+        pen.line(
+            &[(x, y - MACHINE), (x, top), (RISER_X + RISER_STUB, top)],
+            back,
+        );
         let centre = (branch, y - 6.0);
         pen.line(
             &[(x, top), (branch, top), (branch, centre.1 - CHECK.0)],

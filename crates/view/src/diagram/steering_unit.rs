@@ -6,7 +6,7 @@ use kurbo::{Ellipse, Rect, Shape};
 
 use super::context::Context;
 use super::frame::{DOWN, Frame, LEFT, RIGHT, UP};
-use super::places::{PRIORITY_X, RISER_X};
+use super::places::{PRIORITY_X, RISER_STUB, RISER_X};
 use super::symbols::{CHECK, POSITION, RELIEF, check, position, relief, shut};
 use crate::scene::{Anchor, Line, Paint, Part, PartPen, Prim, Stroke};
 
@@ -53,7 +53,7 @@ impl Context<'_> {
         let frame = Rect::new(FRAME.0, top, FRAME.1, FRAME.2).to_path(0.1);
         pen.path(frame, Some(Stroke::plain(Line::Envelope)), None);
         self.unit_lines(&mut pen, gear.shock_relief.is_some());
-        self.unit_checks(&mut pen);
+        self.unit_checks(&mut pen, gear.shock_relief.is_some());
         if gear.shock_relief.is_some() {
             self.shock_reliefs(&mut pen);
         }
@@ -71,12 +71,25 @@ impl Context<'_> {
     fn unit_lines(&self, pen: &mut PartPen, shock: bool) {
         let (x, y) = MIDDLE;
         let back = self.working("return");
-        let high = if shock { SHOCK_Y } else { CHECK_Y };
+        // Each rail turns at its top into the line of what stands there, so that the corner joins.
+        let (high, reach) = if shock {
+            (SHOCK_Y, RELIEF)
+        } else {
+            (CHECK_Y, CHECK.0)
+        };
+        let left = (0.5 * (RAILS.0 + LINES.0) - reach, high);
+        let right = (0.5 * (RAILS.1 + LINES.1) + reach, high);
+        let riser = RISER_X + RISER_STUB;
         pen.line(
-            &[(RISER_X, RETURN_Y), (RAILS.1, RETURN_Y), (RAILS.1, high)],
+            &[
+                (riser, RETURN_Y),
+                (RAILS.1, RETURN_Y),
+                (RAILS.1, high),
+                right,
+            ],
             back,
         );
-        pen.line(&[(RAILS.0, RETURN_Y), (RAILS.0, high)], back);
+        pen.line(&[(RAILS.0, RETURN_Y), (RAILS.0, high), left], back);
         pen.line(&[(x - PORT, y + POSITION), (x - PORT, RETURN_Y)], back);
         pen.line(
             &[(PRIORITY_X, FRAME.2), (PRIORITY_X, y + POSITION)],
@@ -117,15 +130,17 @@ impl Context<'_> {
         pen.head(tip, direction, 10.0);
     }
 
-    fn unit_checks(&self, pen: &mut PartPen) {
+    fn unit_checks(&self, pen: &mut PartPen, shock: bool) {
         for (rail, line, flow, pressure) in [
             (RAILS.0, LINES.0, RIGHT, "p_A"),
             (RAILS.1, LINES.1, LEFT, "p_B"),
         ] {
             let frame = Frame::new((0.5 * (rail + line), CHECK_Y), flow, UP);
             let half = 0.5 * (rail - line).abs();
-            let back = self.working("return");
-            pen.line(&frame.all([(-half, 0.0), (-CHECK.0, 0.0)]), back);
+            if shock {
+                let back = self.working("return");
+                pen.line(&frame.all([(-half, 0.0), (-CHECK.0, 0.0)]), back);
+            }
             pen.line(
                 &frame.all([(CHECK.1, 0.0), (half, 0.0)]),
                 self.working(pressure),
@@ -145,10 +160,6 @@ impl Context<'_> {
             pen.line(
                 &frame.all([(-half, 0.0), (-RELIEF, 0.0)]),
                 self.working(pressure),
-            );
-            pen.line(
-                &frame.all([(RELIEF, 0.0), (half, 0.0)]),
-                self.working("return"),
             );
             relief(pen, &frame, self.pilot(pressure));
             pen.junction((line, SHOCK_Y));

@@ -6,7 +6,8 @@ use kurbo::{Rect, Shape};
 use super::context::Context;
 use super::frame::{Frame, LEFT, RIGHT, UP};
 use super::places::{
-    EXCESS_Y, INLET_Y, PILOT_Y, PRIORITY_RELIEF_X, PRIORITY_RELIEF_Y, PRIORITY_X, RISER_X, VALVE,
+    EXCESS_Y, INLET_Y, PILOT_Y, PRIORITY_RELIEF_X, PRIORITY_RELIEF_Y, PRIORITY_X, RISER_STUB,
+    RISER_X, VALVE,
 };
 use super::symbols::{
     POSITION, RELIEF, damping_hole, orifice, position, relief, shut, side_spring,
@@ -133,12 +134,8 @@ impl Context<'_> {
         let centre = (PRIORITY_RELIEF_X, y);
         let stroke = self.working("p_c");
         pen.line(&[(PRIORITY_X, y), (centre.0 + RELIEF, y)], stroke);
-        pen.line(
-            &[(centre.0 - RELIEF, y), (RISER_X, y)],
-            self.working("return"),
-        );
+        self.to_riser(&mut pen, (centre.0 - RELIEF, y));
         pen.junction((PRIORITY_X, y));
-        pen.junction((RISER_X, y));
         relief(&mut pen, &Frame::new(centre, LEFT, UP), self.pilot("p_c"));
         self.arrow(&mut pen, (120.0, y), LEFT, Signal::PriorityReliefFlow);
         let label = (centre.0 - RELIEF - 8.0, y + 18.0);
@@ -154,17 +151,24 @@ impl Context<'_> {
             &[(SPRING_PILOT_X, y), (centre.0 + RELIEF, y)],
             self.pilot("p_s"),
         );
-        pen.line(
-            &[(centre.0 - RELIEF, y), (RISER_X, y)],
-            self.working("return"),
-        );
+        self.to_riser(&mut pen, (centre.0 - RELIEF, y));
         pen.junction((SPRING_PILOT_X, y));
-        pen.junction((RISER_X, y));
         relief(&mut pen, &Frame::new(centre, LEFT, UP), self.pilot("p_s"));
         self.arrow(&mut pen, (120.0, y), LEFT, Signal::PilotReliefFlow);
         let label = (centre.0 - RELIEF - 8.0, y + 18.0);
         pen.label(label, &self.cracking(of), Anchor::End);
         pen.done()
+    }
+
+    /// A relief's return, to the line down the left edge: round its corner or into its side.
+    fn to_riser(&self, pen: &mut PartPen, from: (f64, f64)) {
+        let back = self.working("return");
+        if self.riser_top().is_some_and(|top| top < from.1) {
+            pen.line(&[from, (RISER_X, from.1)], back);
+            pen.junction((RISER_X, from.1));
+        } else {
+            pen.line(&[from, (RISER_X + RISER_STUB, from.1)], back);
+        }
     }
 
     /// The priority line up to `top`, with its name.

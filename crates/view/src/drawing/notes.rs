@@ -69,7 +69,7 @@ impl Sheet<'_> {
         for (note, x) in above.iter().zip(places(&above, room)) {
             parts.push(drawn(note, (x, top - DISTANCE - ROW), top - DISTANCE));
         }
-        let below = self.notes_below(options);
+        let below = self.notes_below(valve, options);
         for (note, x) in below.iter().zip(places(&below, room)) {
             parts.push(drawn(note, (x, foot + DISTANCE), foot + DISTANCE));
         }
@@ -126,7 +126,7 @@ impl Sheet<'_> {
         ]
     }
 
-    fn notes_below(&self, options: DrawingOptions) -> Vec<Note> {
+    fn notes_below(&self, valve: &PriorityValve, options: DrawingOptions) -> Vec<Note> {
         let s = &self.shape;
         let middle = |span: (f64, f64)| 0.5 * (span.0 + span.1);
         let size = |mm: f64| millimetres(mm, options.units);
@@ -162,7 +162,7 @@ impl Sheet<'_> {
             Note {
                 id: "valve.priority_holes",
                 name: "Priority holes",
-                detail: size(s.priority_holes.1 - s.priority_holes.0),
+                detail: size_text(valve.holes_area, Quantity::Area, options.units),
                 target: self.spool_at(middle(s.priority_holes), -0.75 * s.radius),
             },
             Note {

@@ -173,8 +173,13 @@ impl Proportions {
         let shoulder = excess_left - overlap;
         // Priority holes: shut while the spool travels by their length.
         let start = (valve.holes_start * MM).min(1.1 * stroke);
-        let length = ((valve.holes_end - valve.holes_start) * MM).min(0.5 * d);
         let throttles = valve.holes_start * MM < stroke;
+        let length = if throttles {
+            ((valve.holes_end - valve.holes_start) * MM).min(0.5 * d)
+        } else {
+            // Nothing says how long they are: as four round holes.
+            (diameter_from_area(0.25 * valve.holes_area) * MM).min(0.4 * d)
+        };
         let core_left = excess_core.1 + 0.22 * d;
         let priority_core = (core_left, core_left + start + length + 0.05 * d);
         let holes_right = priority_core.1 - start;

@@ -134,12 +134,64 @@ fn holes_are_drawn_at_their_diameter_and_shut_where_the_model_shuts_them() {
     );
 }
 
+/// Circuits with valves of every land, small, large and odd.
+fn odd_valves() -> Vec<(String, Circuit)> {
+    let settings: [&[(&str, &str)]; 12] = [
+        &[],
+        &[("valve.land", "sharp edge"), ("valve.overlap", "0 mm")],
+        &[
+            ("valve.land", "round holes"),
+            ("valve.land_hole_count", "5"),
+        ],
+        &[
+            ("valve.land", "round holes"),
+            ("valve.land_hole_diameter", "8 mm"),
+        ],
+        &[("valve.land", "notches"), ("valve.notch_count", "3")],
+        &[("valve.land", "notches"), ("valve.notch_angle", "120 deg")],
+        &[
+            ("valve.chamfer_angle", "45 deg"),
+            ("valve.overlap", "-2 mm"),
+        ],
+        &[
+            ("valve.chamfer_angle", "3 deg"),
+            ("valve.chamfer_length", "7.5 mm"),
+        ],
+        &[
+            ("valve.holes_throttle_start", "20 mm"),
+            ("valve.holes_throttle_end", "1000 mm"),
+        ],
+        &[
+            ("valve.fixed_orifice_diameter", "12 mm"),
+            ("valve.disc_hole_diameter", "2 mm"),
+            ("valve.overlap", "4 mm"),
+        ],
+        &[("valve.stroke", "20 mm"), ("valve.spring_volume", "15 cm3")],
+        &[
+            ("valve.spool_diameter", "40 mm"),
+            ("valve.spring_volume", "40 cm3"),
+            ("valve.holes_throttle_start", "0.5 mm"),
+        ],
+    ];
+    let base = Preset::from_key("orchard_carrier")
+        .unwrap()
+        .scenario()
+        .unwrap();
+    let odd = settings.iter().map(|set| {
+        let mut scenario = base.clone();
+        for (path, value) in *set {
+            scenario.set(path, value).unwrap();
+        }
+        (format!("{set:?}"), scenario.circuit().unwrap())
+    });
+    let presets = PRESETS.iter().map(|p| (p.key.to_owned(), circuit(p.key)));
+    odd.chain(presets).collect()
+}
+
 #[test]
 fn nothing_breaks_through_the_walls() {
-    for preset in PRESETS {
-        let circuit = circuit(preset.key);
+    for (key, circuit) in odd_valves() {
         let s = Proportions::of(&circuit.parts().valve);
-        let key = preset.key;
         assert!(s.bore_radius < s.neck_radius, "{key}: wall of the neck");
         assert!(s.neck_radius < s.radius, "{key}: neck");
         assert!(
@@ -175,6 +227,18 @@ fn nothing_breaks_through_the_walls() {
             s.spool_end + s.stroke < s.spring_end,
             "{key}: room for the stroke"
         );
+    }
+}
+
+#[test]
+fn odd_valves_are_drawn_without_collisions() {
+    for (key, circuit) in odd_valves() {
+        let stroke = 1000.0 * circuit.parts().valve.stroke;
+        for step in 0..=4_u32 {
+            let travel = stroke * f64::from(step) / 4.0;
+            let wrong = collisions(&scene(&circuit, travel));
+            assert!(wrong.is_empty(), "{key} at {travel} mm: {wrong:#?}");
+        }
     }
 }
 

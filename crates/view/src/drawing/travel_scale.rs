@@ -8,6 +8,7 @@ use crate::diagram::{DrawingOptions, value_text};
 use crate::plot::number_text;
 use crate::scene::{Anchor, Line, Paint, Part, PartPen, Prim, Stroke, Tone};
 use crate::style::TextSize;
+use crate::svg::label_width;
 use helmsplit_model::Quantity;
 
 /// Length of the scale, px.
@@ -45,12 +46,10 @@ impl Sheet<'_> {
                     millimetres(from, options.units)
                 )
             };
-            pen.text(
-                (right, y - 12.0),
-                text,
-                (TextSize::Small, Tone::Ink),
-                Anchor::End,
-            );
+            let opening = place(s.overlap);
+            let (x, anchor) = beside(&text, (left, right), opening, (x0, x0 + LENGTH));
+            let small = (TextSize::Small, Tone::Ink);
+            pen.text((x, y - 12.0), text, small, anchor);
         }
         let fine = Stroke::plain(Line::Fine);
         pen.line(&[(x0, y), (x0 + LENGTH, y)], fine);
@@ -111,6 +110,31 @@ impl Sheet<'_> {
         let below = (at.0, at.1 + 44.0);
         pen.text(below, text, (TextSize::Label, Tone::Ink), Anchor::Middle);
     }
+}
+
+/// Where the text of a band stands: above the band, on its left or right end, whichever keeps it
+/// on the scale and clear of the mark at `mark`; else beside it.
+fn beside(
+    text: &str,
+    (left, right): (f64, f64),
+    mark: f64,
+    (low, high): (f64, f64),
+) -> (f64, Anchor) {
+    const CLEAR: f64 = 4.0;
+    let width = label_width(text, TextSize::Small);
+    let places = [
+        (left, Anchor::Start, left),
+        (right, Anchor::End, right - width),
+        (mark + 2.0 * CLEAR, Anchor::Start, mark + 2.0 * CLEAR),
+    ];
+    let fits = |start: f64| {
+        let inside = start >= low && start + width <= high;
+        inside && !(start - CLEAR..start + width + CLEAR).contains(&mark)
+    };
+    let found = places.iter().find(|(_, _, start)| fits(*start));
+    found.map_or((mark - 2.0 * CLEAR, Anchor::End), |&(x, anchor, _)| {
+        (x, anchor)
+    })
 }
 
 /// The least of 1, 2, 5 times a power of ten that is no less than `least`.
