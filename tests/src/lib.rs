@@ -6,7 +6,7 @@
 //! list, with what was obtained, to `docs/verification.md`.
 //!
 //! To add a group, write one module under `verification/` with `pub fn checks() -> Vec<Check>`
-//! and name it in [`verification::groups`].
+//! and name it in [`verification::GROUPS`].
 //!
 //! # Conventions
 //! Every expected value stands here as printed in its source or worked out from the formula that
