@@ -29,7 +29,11 @@ fn solve(circuit: &Circuit, inputs: &InputProfiles, to: f64, start: &Start, tole
         options: &options,
     };
     let result = run(black_box(&setup), &mut Watch::none()).expect("the setup fits");
-    assert!(result.end.is_finished(), "the run ends early: {}", result.end);
+    assert!(
+        result.end.is_finished(),
+        "the run ends early: {}",
+        result.end
+    );
 }
 
 fn references(criterion: &mut Criterion) {

@@ -18,9 +18,9 @@ pub struct Chapter {
 const OPENING: &str = "\
 # Verification
 
-Every value below comes from outside this program: a book, a standard, a paper, or a closed form
-worked out from the formula that the source states. The tests of the package
-`helmsplit-acceptance` assert all of them. This page is written by
+Every value below comes from outside this program: a book, a standard, a paper, a closed form worked
+out from the formula that the source states, or, for whole circuits, an independent implementation
+of the same equations. The tests of the package `helmsplit-acceptance` assert all of them. This page is written by
 
     cargo run -p helmsplit-acceptance --example verification
 

@@ -3,7 +3,7 @@
 use std::collections::BTreeSet;
 use std::path::Path;
 
-use helmsplit_acceptance::check::Mark;
+use helmsplit_acceptance::check::{Mark, Repeatability};
 use helmsplit_acceptance::document;
 use helmsplit_acceptance::verification::{GROUPS, chapters};
 
@@ -35,10 +35,16 @@ fn every_check_is_met_and_the_document_says_so() {
     let path = Path::new(env!("CARGO_MANIFEST_DIR")).join("../docs/verification.md");
     let on_disk = std::fs::read_to_string(&path).expect("docs/verification.md is there");
     let present = document::write(&chapters);
+    let solved: BTreeSet<&str> = chapters
+        .iter()
+        .flat_map(|chapter| &chapter.outcomes)
+        .filter(|outcome| outcome.check.repeats == Repeatability::Solver)
+        .map(|outcome| outcome.check.id.as_str())
+        .collect();
     for (number, (old, new)) in on_disk.lines().zip(present.lines()).enumerate() {
         assert_eq!(
-            old,
-            new,
+            repeatable(old, &solved),
+            repeatable(new, &solved),
             "docs/verification.md is out of date in line {}; write it with \
              cargo run -p helmsplit-acceptance --example verification",
             number + 1
@@ -50,6 +56,25 @@ fn every_check_is_met_and_the_document_says_so() {
         "docs/verification.md is out of date; write it with \
          cargo run -p helmsplit-acceptance --example verification"
     );
+}
+
+/// The cells of a line that are the same on every machine. What a solver obtained, and how far off
+/// it is, differs in its last digits, and with it which check comes closest to its tolerance; that
+/// it is met is asserted apart from the document.
+fn repeatable<'a>(line: &'a str, solved: &BTreeSet<&str>) -> Vec<&'a str> {
+    let mut cells: Vec<&str> = line.split('|').map(str::trim).collect();
+    match cells.len() {
+        // id, case, expected, obtained, deviation, tolerance, source, between bars.
+        9 if solved.contains(cells[1]) => {
+            cells.drain(4..6);
+        }
+        // group, checks, met, closest, between bars.
+        6 => {
+            cells.remove(4);
+        }
+        _ => {}
+    }
+    cells
 }
 
 #[test]

@@ -34,6 +34,8 @@ pub(crate) enum Command {
     Run(RunArguments),
     /// Solve a circuit and print every check with its evidence; writes nothing
     Check(CheckArguments),
+    /// Draw the circuit, or its valve in section, as SVG
+    Draw(DrawArguments),
     /// Write a commented circuit file from a preset
     New(NewArguments),
     /// List or search the parameters of a circuit file
@@ -54,7 +56,7 @@ pub(crate) enum Command {
 pub(crate) struct CircuitArguments {
     /// Circuit file, or the name of a preset
     pub(crate) file: PathBuf,
-    /// Set a value: valve.fixed_orifice_diameter="3.5 mm", excess.kind="tank"; may be repeated
+    /// Set a value, such as `valve.fixed_orifice_diameter="3.5 mm"` or `excess.kind=tank`; may be repeated
     #[arg(long = "set", value_name = "PATH=VALUE")]
     pub(crate) set: Vec<String>,
     /// Start the run from: settled, cold, or a state file written by --save-state
@@ -91,7 +93,7 @@ pub(crate) struct RunArguments {
 
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
 pub(crate) enum RowChoice {
-    /// One row each solver.output_step
+    /// One row each `solver.output_step`
     Grid,
     /// One row each step of the solver
     Steps,
@@ -133,6 +135,30 @@ pub(crate) struct CheckArguments {
     /// Print JSON instead of text
     #[arg(long)]
     pub(crate) json: bool,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct DrawArguments {
+    #[command(flatten)]
+    pub(crate) circuit: CircuitArguments,
+    /// Draw the circuit in symbols of ISO 1219-1; this is the default
+    #[arg(long = "circuit", conflicts_with = "valve")]
+    pub(crate) whole: bool,
+    /// Draw the priority valve in section
+    #[arg(long)]
+    pub(crate) valve: bool,
+    /// Solve the run and shade the oil by its pressure at this time: "3.4 s"
+    #[arg(long, value_name = "TIME")]
+    pub(crate) at: Option<String>,
+    /// Draw the spool of the valve at this travel instead: "2.3 mm"
+    #[arg(long, value_name = "LENGTH", requires = "valve")]
+    pub(crate) travel: Option<String>,
+    /// File to write; by default the drawing is printed
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: Option<PathBuf>,
+    /// Colours of the drawing
+    #[arg(long, value_enum, default_value_t = Colours::Light)]
+    pub(crate) theme: Colours,
 }
 
 #[derive(Debug, Args)]

@@ -63,7 +63,7 @@ fn warn(findings: &Findings) {
 /// After `--set` the whole is looked at again: a change can contradict what the file says.
 fn report(findings: &Findings, source: &str, changed: bool) -> Result<(), Failure> {
     let mut named = Findings::of(source);
-    for finding in findings.iter() {
+    for finding in findings {
         named.push(finding.clone());
     }
     if named.has_errors() {

@@ -106,28 +106,39 @@ fn convert_keeps_comments_and_values() {
     assert_eq!(out(&back), text, "there and back");
 }
 
+/// Asserts that a call is refused with status 2, without a panic, and names what is `wanted`.
+fn refused(home: &Path, arguments: &[&str], wanted: &[&str]) {
+    let done = helmsplit(home, arguments);
+    let message = err(&done);
+    let shown: String = arguments.join(" ").chars().take(60).collect();
+    assert_eq!(done.status.code(), Some(2), "{shown}: {message}");
+    assert!(message.contains("error"), "{shown}: {message}");
+    assert!(!message.contains("panicked"), "{shown}: {message}");
+    for text in wanted {
+        assert!(
+            message.contains(text),
+            "{shown}: no \"{text}\" in {message}"
+        );
+    }
+    let written = home.join("helmsplit-out").exists();
+    assert!(!written, "{shown}: a refused run writes nothing");
+}
+
 #[test]
-fn bad_input_is_refused_with_status_2_and_a_hint() {
+fn bad_files_are_refused_with_status_2_and_a_place() {
     let home = folder();
-    let write = |name: &str, bytes: &[u8]| {
-        std::fs::write(home.path().join(name), bytes).expect("written");
-    };
-    write("cut.ron", b"(format: 1, valve: (spool_diameter: \"20 mm\"");
-    write(
-        "typo.ron",
-        b"(\n  valve: (spool_diametre: \"20 mm\"),\n  pump: (displacement: \"20\"),\n)",
-    );
-    write("latin.ron", b"(name: \"\xe4\")");
-    write("deep.ron", "(".repeat(5000).as_bytes());
-    write("empty.ron", b"");
-    write("state.json", b"{\"time_s\": 0, \"states\": [[\"q\", 1]]}");
-    let long = format!("{}=1", "x".repeat(10_000));
-    let demo = "orchard_carrier";
-    let cases: [(&[&str], &[&str]); 14] = [
-        (&["run", "missing.ron"], &["missing.ron", "no such file"]),
-        (&["run", "cut.ron"], &["cut.ron:1:", "ends before"]),
+    let typo: &[u8] =
+        b"(\n  valve: (spool_diametre: \"20 mm\"),\n  pump: (displacement: \"20\"),\n)";
+    let deep = "(".repeat(5000);
+    let cases: [(&str, &[u8], &[&str]); 5] = [
         (
-            &["run", "typo.ron"],
+            "cut.ron",
+            b"(format: 1, valve: (spool_diameter: \"20 mm\"",
+            &["cut.ron:1:", "ends before"],
+        ),
+        (
+            "typo.ron",
+            typo,
             &[
                 "typo.ron:2:",
                 "did you mean spool_diameter?",
@@ -135,50 +146,57 @@ fn bad_input_is_refused_with_status_2_and_a_hint() {
                 "needs a unit",
             ],
         ),
-        (&["run", "latin.ron"], &["UTF-8"]),
-        (&["run", "deep.ron"], &["deep.ron:1:"]),
-        (&["run", "empty.ron"], &["empty.ron"]),
-        (&["run", "."], &["folder"]),
-        (
-            &["run", demo, "--set", "valve.spool_diameter=20 bar"],
-            &["is a pressure"],
-        ),
-        (
-            &["run", demo, "--set", "excess.kind=tanks"],
-            &["did you mean", "tank"],
-        ),
-        (
-            &["run", demo, "--set", "valve.spring_volume=1 cm3"],
-            &["valve.spring_volume"],
-        ),
-        (&["run", demo, "--start", "nowhere.json"], &["nowhere.json"]),
-        (
-            &["run", demo, "--start", "state.json"],
-            &["state.json", "q"],
-        ),
-        (
-            &["new", "orchard_carier"],
-            &["did you mean orchard_carrier"],
-        ),
-        (&["run", demo, "--set", &long], &["no such parameter"]),
+        ("latin.ron", b"(name: \"\xe4\")", &["latin.ron:1:", "UTF-8"]),
+        ("deep.ron", deep.as_bytes(), &["deep.ron:1:"]),
+        ("empty.ron", b"", &["empty.ron"]),
     ];
-    for (arguments, wanted) in cases {
-        let done = helmsplit(home.path(), arguments);
-        let message = err(&done);
-        let shown: String = arguments.join(" ").chars().take(60).collect();
-        assert_eq!(done.status.code(), Some(2), "{shown}: {message}");
-        assert!(message.contains("error"), "{shown}: {message}");
-        assert!(!message.contains("panicked"), "{shown}: {message}");
-        for text in wanted {
-            assert!(
-                message.contains(text),
-                "{shown}: no \"{text}\" in {message}"
-            );
-        }
+    for (name, bytes, wanted) in cases {
+        std::fs::write(home.path().join(name), bytes).expect("written");
+        refused(home.path(), &["run", name], wanted);
+        refused(home.path(), &["check", name], wanted);
+        refused(home.path(), &["convert", name, "--to", "si"], wanted);
     }
-    assert!(
-        !home.path().join("helmsplit-out").exists(),
-        "a refused run writes nothing"
+    refused(
+        home.path(),
+        &["run", "missing.ron"],
+        &["missing.ron", "no such file"],
+    );
+    refused(home.path(), &["run", "."], &["folder"]);
+}
+
+#[test]
+fn bad_arguments_are_refused_with_status_2_and_a_hint() {
+    let home = folder();
+    let other = "{\"time_s\": 0, \"states\": [[\"q\", 1]]}";
+    std::fs::write(home.path().join("state.json"), other).expect("written");
+    let long = format!("{}=1", "x".repeat(10_000));
+    let settings: [(&str, &[&str]); 4] = [
+        ("valve.spool_diameter=20 bar", &["is a pressure"]),
+        ("excess.kind=tanks", &["did you mean", "tank"]),
+        ("valve.spring_volume=1 cm3", &["valve.spring_volume"]),
+        (&long, &["no such parameter"]),
+    ];
+    for (setting, wanted) in settings {
+        refused(
+            home.path(),
+            &["run", "orchard_carrier", "--set", setting],
+            wanted,
+        );
+    }
+    for (file, wanted) in [
+        ("nowhere.json", "nowhere.json"),
+        ("state.json", "state.json"),
+    ] {
+        refused(
+            home.path(),
+            &["run", "orchard_carrier", "--start", file],
+            &[wanted],
+        );
+    }
+    refused(
+        home.path(),
+        &["new", "orchard_carier"],
+        &["did you mean orchard_carrier"],
     );
 }
 

@@ -143,7 +143,6 @@ impl Circuit {
 
     /// Rates of all states (SI per second) into `rates`; both slices as long as
     /// [`Self::state_count`].
-    #[inline]
     pub fn derivatives(&self, inputs: &Inputs, states: &[f64], rates: &mut [f64]) {
         self.evaluate(inputs, states, rates, &mut Unobserved);
     }
@@ -175,11 +174,13 @@ impl Circuit {
         column_major: &mut [f64],
     ) {
         let n = self.state_count();
-        let mut y = [Dual::<N>::constant(0.0); ROOM];
+        let y: [Dual<N>; ROOM] = std::array::from_fn(|i| {
+            // A column outside this pass, also one that lies before it, is a constant.
+            states.get(i).map_or(Dual::constant(0.0), |&value| {
+                Dual::variable(value, i.wrapping_sub(first))
+            })
+        });
         let mut dy = [Dual::<N>::constant(0.0); ROOM];
-        for (i, (dual, &value)) in y.iter_mut().zip(states).enumerate() {
-            *dual = Dual::variable(value, i.wrapping_sub(first));
-        }
         self.evaluate(inputs, &y[..n], &mut dy[..n], &mut Unobserved);
         for column in first..n.min(first + N) {
             let out = &mut column_major[column * n..(column + 1) * n];

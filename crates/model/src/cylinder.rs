@@ -2,6 +2,7 @@
 
 use crate::end_stop::{EndStop, pair_force};
 use crate::node::Chamber;
+use crate::oil::Oil;
 use crate::real::Real;
 
 /// A double-acting cylinder with the mass that moves along; travel `y` from mid-stroke, m.
@@ -48,6 +49,41 @@ impl Cylinder {
             volume: self.dead_b + 0.5 * self.area_b * self.stroke,
             wall_compressibility: self.wall_compressibility,
         }
+    }
+
+    /// Rates of the pressures in chambers A and B (Pa/s) and the leakage across the piston from A
+    /// to B (m3/s) (M7.6), from the pressures (Pa), what flows into each chamber (m3/s), travel
+    /// (m) and velocity (m/s).
+    #[inline(always)]
+    pub fn pressure_rates<S: Real>(
+        &self,
+        oil: &Oil,
+        pressures: (S, S),
+        inflows: (S, S),
+        travel: S,
+        velocity: S,
+    ) -> (S, S, S) {
+        let (p_a, p_b) = pressures;
+        let leak = (p_a - p_b) * self.piston_leak;
+        let rate_a = self.chamber_a().pressure_rate_moving(
+            oil,
+            p_a,
+            inflows.0 - leak - velocity * self.area_a,
+            travel * self.area_a,
+        );
+        let rate_b = self.chamber_b().pressure_rate_moving(
+            oil,
+            p_b,
+            inflows.1 + leak + velocity * self.area_b,
+            travel * -self.area_b,
+        );
+        (rate_a, rate_b, leak)
+    }
+
+    /// Force of the oil towards positive travel, N.
+    #[inline(always)]
+    pub fn oil_force<S: Real>(&self, p_a: S, p_b: S) -> S {
+        p_a * self.area_a - p_b * self.area_b
     }
 
     /// Penetration into the lower and the upper stop, m, positive inside.

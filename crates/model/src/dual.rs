@@ -33,20 +33,18 @@ impl<const N: usize> Dual<N> {
 
     #[inline(always)]
     fn map(self, value: f64, f: impl Fn(f64) -> f64) -> Self {
-        let mut slopes = self.slopes;
-        for slope in &mut slopes {
-            *slope = f(*slope);
+        Self {
+            value,
+            slopes: std::array::from_fn(|i| f(self.slopes[i])),
         }
-        Self { value, slopes }
     }
 
     #[inline(always)]
     fn zip(self, other: Self, value: f64, f: impl Fn(f64, f64) -> f64) -> Self {
-        let mut slopes = self.slopes;
-        for (slope, theirs) in slopes.iter_mut().zip(other.slopes) {
-            *slope = f(*slope, theirs);
+        Self {
+            value,
+            slopes: std::array::from_fn(|i| f(self.slopes[i], other.slopes[i])),
         }
-        Self { value, slopes }
     }
 }
 

@@ -184,25 +184,19 @@ impl Circuit {
         in_rod: S,
     ) {
         let ix = &self.layout;
-        let oil = &self.parts.oil;
         let cylinder = &gear.cylinder;
         let (p_cap, p_rod) = (y[ix.p_cap], y[ix.p_rod]);
         let (travel, velocity) = (y[ix.y_l], y[ix.v_l]);
-        let leak = (p_cap - p_rod) * cylinder.piston_leak;
-        let (area_a, area_b) = (cylinder.area_a, cylinder.area_b);
-        dy[ix.p_cap] = cylinder.chamber_a().pressure_rate_moving(
-            oil,
-            p_cap,
-            in_cap - leak - velocity * area_a,
-            travel * area_a,
+        let (rate_cap, rate_rod, leak) = cylinder.pressure_rates(
+            &self.parts.oil,
+            (p_cap, p_rod),
+            (in_cap, in_rod),
+            travel,
+            velocity,
         );
-        dy[ix.p_rod] = cylinder.chamber_b().pressure_rate_moving(
-            oil,
-            p_rod,
-            in_rod + leak + velocity * area_b,
-            travel * -area_b,
-        );
-        let oil_force = p_cap * area_a - p_rod * area_b;
+        dy[ix.p_cap] = rate_cap;
+        dy[ix.p_rod] = rate_rod;
+        let oil_force = cylinder.oil_force(p_cap, p_rod);
         let dry =
             velocity.univariate(|v| (v * (1.0 / gear.dry_velocity)).tanh() * gear.dry_friction);
         let drag = velocity * cylinder.damping;

@@ -218,24 +218,13 @@ impl Circuit {
         in_b: S,
     ) {
         let ix = &self.layout;
-        let oil = &self.parts.oil;
         let cylinder = &gear.cylinder;
         let (p_a, p_b) = (y[ix.p_a], y[ix.p_bc]);
         let (travel, velocity) = (y[ix.y_c], y[ix.v_c]);
-        let leak = (p_a - p_b) * cylinder.piston_leak;
-        let (area_a, area_b) = (cylinder.area_a, cylinder.area_b);
-        dy[ix.p_a] = cylinder.chamber_a().pressure_rate_moving(
-            oil,
-            p_a,
-            in_a - leak - velocity * area_a,
-            travel * area_a,
-        );
-        dy[ix.p_bc] = cylinder.chamber_b().pressure_rate_moving(
-            oil,
-            p_b,
-            in_b + leak + velocity * area_b,
-            travel * -area_b,
-        );
+        let (rate_a, rate_b, leak) =
+            cylinder.pressure_rates(&self.parts.oil, (p_a, p_b), (in_a, in_b), travel, velocity);
+        dy[ix.p_a] = rate_a;
+        dy[ix.p_bc] = rate_b;
         let (scrub, scrub_loss) = match &gear.scrub {
             Friction::Smooth {
                 coulomb,
@@ -252,7 +241,7 @@ impl Circuit {
             }
         };
         let external = inputs.get(Input::ExternalForce);
-        let oil_force = p_a * area_a - p_b * area_b;
+        let oil_force = cylinder.oil_force(p_a, p_b);
         let tyre = travel * gear.tyre_rate + scrub;
         let drag = velocity * cylinder.damping;
         let stops = cylinder.stop_force(travel, velocity);

@@ -1,5 +1,6 @@
 //! A line of segments with inertia and friction (M7.2).
 
+use crate::dual::Dual;
 use crate::oil::Oil;
 use crate::real::Real;
 use crate::smooth::smooth_step;
@@ -60,7 +61,7 @@ impl Line {
     /// Reibungsvorgaengen*, 1913, smooth walls, Re up to 1e5.
     #[inline(always)]
     pub fn segment_drop<S: Real>(&self, oil: &Oil, flow: S) -> S {
-        flow.univariate(|q| self.segment_drop_at(oil, q))
+        flow.widen(self.segment_drop_at(oil, Dual::variable(flow.value(), 0)))
     }
 
     #[inline(always)]

@@ -35,10 +35,10 @@ impl Chamber {
     /// Rate of pressure in Pa/s from the net inflow in m3/s (M1.6).
     #[inline(always)]
     pub fn pressure_rate<S: Real>(&self, oil: &Oil, pressure: S, net_inflow: S) -> S {
-        let stiffness = pressure.univariate(|p| {
-            Dual::constant(1.0 / self.volume)
-                / (oil.compressibility_at(p) + self.wall_compressibility)
-        });
+        let p = Dual::<1>::variable(pressure.value(), 0);
+        let compressibility = oil.compressibility_at(p) + self.wall_compressibility;
+        let stiffness = Dual::constant(1.0) / (compressibility * self.volume);
+        let stiffness = pressure.widen(stiffness);
         net_inflow * stiffness
     }
 
@@ -52,10 +52,13 @@ impl Chamber {
         net_inflow: S,
         extra: S,
     ) -> S {
-        let stiffness = pressure.bivariate(extra, |p, extra| {
-            let compressibility = oil.compressibility_at(p) + self.wall_compressibility;
-            Dual::constant(1.0) / (compressibility * (extra + self.volume))
-        });
+        let (p, size) = (
+            Dual::<2>::variable(pressure.value(), 0),
+            Dual::<2>::variable(extra.value(), 1),
+        );
+        let compressibility = oil.compressibility_at(p) + self.wall_compressibility;
+        let stiffness = Dual::constant(1.0) / (compressibility * (size + self.volume));
+        let stiffness = pressure.widen2(extra, stiffness);
         net_inflow * stiffness
     }
 }

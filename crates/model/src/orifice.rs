@@ -1,5 +1,6 @@
 //! Orifices, from creeping to turbulent flow in one formula (M2).
 
+use crate::dual::Dual;
 use crate::oil::Oil;
 use crate::real::Real;
 use crate::smooth::smooth_step;
@@ -157,9 +158,11 @@ impl Edge {
         if dp.value() <= 0.0 {
             return S::constant(0.0);
         }
-        area.bivariate(dp, |area, dp| {
-            let open = area * smooth_step(dp * (1.0 / opening_pressure));
-            self.round(oil, open, dp) * open
-        })
+        let (opening, drop) = (
+            Dual::<2>::variable(area.value(), 0),
+            Dual::<2>::variable(dp.value(), 1),
+        );
+        let open = opening * smooth_step(drop * (1.0 / opening_pressure));
+        area.widen2(dp, self.round(oil, open, drop) * open)
     }
 }

@@ -38,24 +38,40 @@ pub trait Real:
     #[must_use]
     fn chain2(self, other: Self, f: f64, by_self: f64, by_other: f64) -> Self;
 
+    /// Takes over a function of this number that was computed in a narrow dual number, seeded with
+    /// [`Dual::variable`] in column 0.
+    #[inline(always)]
+    #[must_use]
+    fn widen(self, narrow: Dual<1>) -> Self {
+        self.chain(narrow.value, narrow.slopes[0])
+    }
+
+    /// Same for a function of this number (column 0) and another (column 1).
+    #[inline(always)]
+    #[must_use]
+    fn widen2(self, other: Self, narrow: Dual<2>) -> Self {
+        self.chain2(other, narrow.value, narrow.slopes[0], narrow.slopes[1])
+    }
+
     /// A function of this number alone, differentiated once in a narrow dual number instead of in
     /// every column: what a leaf of the equations should use when it takes several operations.
+    /// A closure that grows large and is called from several places may not be inlined, and then
+    /// computes its derivative for `f64` too; such leaves call [`Self::widen`] themselves.
     #[inline(always)]
     #[must_use]
     fn univariate(self, f: impl FnOnce(Dual<1>) -> Dual<1>) -> Self {
-        let narrow = f(Dual::variable(self.value(), 0));
-        self.chain(narrow.value, narrow.slopes[0])
+        self.widen(f(Dual::variable(self.value(), 0)))
     }
 
     /// Same for a function of two numbers.
     #[inline(always)]
     #[must_use]
     fn bivariate(self, other: Self, f: impl FnOnce(Dual<2>, Dual<2>) -> Dual<2>) -> Self {
-        let narrow = f(
+        let (x, y) = (
             Dual::variable(self.value(), 0),
             Dual::variable(other.value(), 1),
         );
-        self.chain2(other, narrow.value, narrow.slopes[0], narrow.slopes[1])
+        self.widen2(other, f(x, y))
     }
 
     /// Square root; the derivative at 0 is infinite, so call sites keep the argument positive.

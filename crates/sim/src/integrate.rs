@@ -12,6 +12,7 @@ use diffsol::{
     OdeSolverStopReason, Op, RkState, StateRef, StateRefMut, Vector, VectorCommon,
 };
 
+use crate::crawl_guard::CrawlGuard;
 use crate::ending::{GiveUp, RunEnd};
 use crate::error::SimError;
 use crate::history::History;
@@ -178,6 +179,11 @@ fn check_start(system: &dyn System, start: &[f64]) -> Result<(), SimError> {
     }
 }
 
+/// Longest first step after the inputs bend, s. The solver comes along with the long steps of the
+/// quiet time before; such a step can reach over all that the bend sets going and end where the
+/// rates happen to be the old ones, and then no error test notices.
+const AFTER_BEND: f64 = 1e-4;
+
 /// How far the solver got; kept outside of it, so that it survives a panic.
 struct Reached {
     time: f64,
@@ -276,11 +282,15 @@ impl<'d, 's> Drive<'d, 's, '_> {
             }
             self.recorder
                 .begin(number, self.reached.time, &self.reached.state);
-            if let Err(error) = solver.set_stop_time(piece.end) {
-                return Outcome::GaveUp(reason(&error, self.options));
-            }
-            if let Some(outcome) = self.one_piece(&mut solver, &mut crawl) {
-                return outcome;
+            let bend = number > 0 && !piece.jump;
+            let first = Some(self.reached.time + AFTER_BEND).filter(|t| bend && *t < piece.end);
+            for stop in first.into_iter().chain([piece.end]) {
+                if let Err(error) = solver.set_stop_time(stop) {
+                    return Outcome::GaveUp(reason(&error, self.options));
+                }
+                if let Some(outcome) = self.one_piece(&mut solver, &mut crawl) {
+                    return outcome;
+                }
             }
         }
         Outcome::Finished
@@ -325,7 +335,7 @@ impl<'d, 's> Drive<'d, 's, '_> {
             if self.watch.cancelled_at(self.reached.time) {
                 return Some(Outcome::Cancelled);
             }
-            if let Some(reason) = crawl.check(self.reached) {
+            if let Some(reason) = crawl.check(self.reached.statistics.steps, self.reached.time) {
                 return Some(Outcome::GaveUp(reason));
             }
         }
@@ -383,46 +393,5 @@ fn reason(error: &DiffsolError, options: &SolverOptions) -> GiveUp {
         other => GiveUp::Solver {
             message: other.to_string(),
         },
-    }
-}
-
-/// Ends runs that only crawl: a finite but hopeless run is worse than a message.
-struct CrawlGuard {
-    max_steps: usize,
-    window: usize,
-    least_advance: f64,
-    window_start: f64,
-    next_look: usize,
-}
-
-impl CrawlGuard {
-    fn new(options: &SolverOptions, time: f64) -> Self {
-        Self {
-            max_steps: options.max_steps,
-            window: options.crawl_steps,
-            least_advance: options.crawl_advance,
-            window_start: time,
-            next_look: options.crawl_steps,
-        }
-    }
-
-    fn check(&mut self, reached: &Reached) -> Option<GiveUp> {
-        let steps = reached.statistics.steps;
-        if steps >= self.max_steps {
-            return Some(GiveUp::TooManySteps { steps });
-        }
-        if steps < self.next_look {
-            return None;
-        }
-        let advance = reached.time - self.window_start;
-        if advance < self.least_advance {
-            return Some(GiveUp::Crawl {
-                steps: self.window,
-                advance,
-            });
-        }
-        self.window_start = reached.time;
-        self.next_look = steps + self.window;
-        None
     }
 }

@@ -15,7 +15,10 @@
 
 mod audit;
 mod circuit_system;
+mod crawl_guard;
 mod csv_export;
+mod dense_factors;
+mod elimination_order;
 mod ending;
 mod error;
 mod extremes;
@@ -32,6 +35,7 @@ mod run;
 mod saved_state;
 mod settle;
 mod sidecar;
+mod sparse_factors;
 mod statistics;
 mod system;
 mod table;

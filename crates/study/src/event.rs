@@ -1,6 +1,6 @@
 //! Moments of a run that a person would point at.
 
-use helmsplit_model::{Circuit, Signal, SteeringSide};
+use helmsplit_model::{Circuit, PriorityRelief, Signal, SteeringSide};
 use helmsplit_sim::Trace;
 
 use crate::lock::is_locked;
@@ -11,8 +11,10 @@ use crate::lock::is_locked;
 pub enum EventKind {
     /// The main relief began to pass oil.
     MainReliefCracked,
-    /// The priority relief, or the pilot on the spring chamber, began to pass oil.
+    /// The relief on the priority port began to pass oil.
     PriorityReliefCracked,
+    /// The pilot on the spring chamber began to pass oil.
+    PilotCracked,
     /// The excess relief began to pass oil.
     ExcessReliefCracked,
     /// The spool reached the stop at full travel.
@@ -30,6 +32,7 @@ impl EventKind {
         match self {
             Self::MainReliefCracked => "main relief cracked",
             Self::PriorityReliefCracked => "priority relief cracked",
+            Self::PilotCracked => "pilot relief cracked",
             Self::ExcessReliefCracked => "excess relief cracked",
             Self::SpoolAtStop => "spool at its stop",
             Self::SteeringAtLock => "steering at the lock",
@@ -69,12 +72,13 @@ pub fn events(circuit: &Circuit, trace: &Trace) -> Vec<Event> {
         let begun = onsets(times, on).into_iter();
         found.extend(begun.map(|time| Event { time, kind }));
     };
+    let steering = match circuit.parts().priority_relief {
+        PriorityRelief::Pilot(_) => EventKind::PilotCracked,
+        PriorityRelief::None | PriorityRelief::OnPort(_) => EventKind::PriorityReliefCracked,
+    };
     for (signal, kind) in [
         (Signal::MainReliefOpening, EventKind::MainReliefCracked),
-        (
-            Signal::PriorityReliefOpening,
-            EventKind::PriorityReliefCracked,
-        ),
+        (Signal::PriorityReliefOpening, steering),
         (Signal::ExcessReliefOpening, EventKind::ExcessReliefCracked),
     ] {
         if let Some(opening) = trace.signal(signal) {

@@ -26,5 +26,5 @@ pub use error::StudyError;
 pub use event::{Event, EventKind, events};
 pub use lock::{LockHold, lock_holds};
 pub use response::{Response, response_after};
-pub use solve::{Solved, options_of, solve};
+pub use solve::{Solved, solve};
 pub use window::{Window, windows};

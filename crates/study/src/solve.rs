@@ -2,8 +2,8 @@
 
 use helmsplit_model::{Circuit, InputProfiles};
 use helmsplit_scenario::Scenario;
-use helmsplit_scenario::choice::{SolverMethod, StartKind};
-use helmsplit_sim::{Method, RunResult, RunSetup, SolverOptions, Start, Watch, run};
+use helmsplit_scenario::choice::StartKind;
+use helmsplit_sim::{RunResult, RunSetup, SolverOptions, Start, Watch, run};
 
 use crate::check::{Check, Status};
 use crate::checks::check_run;
@@ -30,22 +30,6 @@ impl Solved {
     #[must_use]
     pub fn fails(&self) -> bool {
         self.checks.iter().any(|c| c.status == Status::Fail)
-    }
-}
-
-/// The solver options that a scenario asks for; the output grid goes along.
-#[must_use]
-pub fn options_of(scenario: &Scenario) -> SolverOptions {
-    let settings = scenario.solver();
-    SolverOptions {
-        relative_tolerance: settings.relative_tolerance,
-        max_steps: settings.max_steps,
-        output_step: Some(settings.output_step),
-        method: match settings.method {
-            SolverMethod::Bdf => Method::Bdf,
-            SolverMethod::Esdirk34 => Method::Esdirk34,
-        },
-        ..SolverOptions::default()
     }
 }
 

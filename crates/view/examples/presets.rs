@@ -4,8 +4,8 @@
 use std::path::PathBuf;
 
 use helmsplit_scenario::{PRESETS, UnitSystem};
-use helmsplit_sim::Watch;
-use helmsplit_study::{options_of, solve};
+use helmsplit_sim::{SolverOptions, Watch};
+use helmsplit_study::solve;
 use helmsplit_view::figures::solved_figure;
 use helmsplit_view::{BuiltInTheme, SvgOptions, svg_from_figure};
 
@@ -22,7 +22,12 @@ fn main() -> Result<(), Box<dyn std::error::Error>> {
         let scenario = preset
             .scenario()
             .map_err(|findings| format!("{}: {findings}", preset.key))?;
-        let solved = solve(&scenario, None, &options_of(&scenario), &mut Watch::none())?;
+        let solved = solve(
+            &scenario,
+            None,
+            &SolverOptions::from(&scenario.solver()),
+            &mut Watch::none(),
+        )?;
         let figure = solved_figure(&scenario, &solved, UnitSystem::Metric);
         let svg = svg_from_figure(&figure, &SvgOptions::new(&theme));
         std::fs::write(folder.join(format!("{}.svg", preset.key)), svg)?;

@@ -3,6 +3,8 @@
 //! Start with [`plot::Figure`]: stacked panels over one time axis, plain data without a colour or
 //! a pixel. [`svg_from_figure`] writes it as a self-contained SVG in a [`Theme`]; another painter
 //! takes the same figure, the same [`plot::Ticks`] and the same [`plot::decimate`].
+//! [`circuit_scene`] draws a circuit with the symbols of ISO 1219-1, as a [`scene::Scene`] that
+//! [`svg_from_scene`] writes and a window can point at; a [`Moment`] shades it by pressure.
 //! [`figures`] makes figures from results; [`TextTable`] sets tables for a terminal.
 //!
 //! # Conventions
@@ -14,21 +16,33 @@
 //! Windows, raster images, files: the two front ends do that.
 
 mod colour;
+pub mod diagram;
+pub mod drawing;
 mod error;
 pub mod figures;
+mod moment;
 pub mod plot;
+mod ramp;
+mod scale_bar;
+pub mod scene;
 pub mod style;
 mod svg;
 mod table;
 mod theme;
+mod theme_scene;
 mod unit_text;
 
 pub use colour::{Colour, ColourError};
+pub use diagram::circuit_scene;
+pub use drawing::valve_scene;
 pub use error::ViewError;
-pub use svg::{SvgOptions, svg_from_figure};
+pub use moment::Moment;
+pub use ramp::{PressureScale, Ramp};
+pub use svg::{SvgOptions, svg_from_figure, svg_from_scene};
 pub use table::{Column, TextTable};
 pub use theme::{
-    BuiltInTheme, FillColours, RuleColours, SeriesColours, Strokes, TextTones, Theme, Wash,
+    BodyColours, BuiltInTheme, FillColours, RuleColours, SeriesColours, Strokes, TextTones, Theme,
+    Wash,
 };
 pub use unit_text::unit_text;
 

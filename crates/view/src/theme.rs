@@ -4,6 +4,7 @@ use serde::{Deserialize, Serialize};
 
 use crate::colour::Colour;
 use crate::error::ViewError;
+use crate::ramp::Ramp;
 use crate::style::{Fill, Meaning};
 
 /// Colours and strokes of everything that is drawn.
@@ -26,6 +27,24 @@ pub struct Theme {
     pub accent: Colour,
     /// Stroke widths, px.
     pub strokes: Strokes,
+    /// Bodies in drawings.
+    pub bodies: BodyColours,
+    /// Oil by pressure, from none to the most.
+    pub pressure: Ramp,
+}
+
+/// Colours of bodies in drawings.
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[serde(deny_unknown_fields)]
+pub struct BodyColours {
+    /// Steel that moves.
+    pub steel: Colour,
+    /// Cut face of the housing.
+    pub housing: Colour,
+    /// Hatching of cut faces.
+    pub hatch: Colour,
+    /// Springs.
+    pub spring: Colour,
 }
 
 /// Tones of text.

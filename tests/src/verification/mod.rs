@@ -1,8 +1,10 @@
 //! The list of outside checks, one module a group.
 
 mod chamber;
+mod circuit_runs;
 mod clearance;
 mod cylinder;
+mod earlier_study;
 mod friction;
 mod jet_force;
 mod land;
@@ -10,6 +12,7 @@ mod oil;
 mod orifice;
 mod pipe;
 mod pump;
+mod reference_traces;
 mod spool;
 mod steering;
 mod stiffness;
@@ -101,6 +104,21 @@ pub const GROUPS: &[Group] = &[
         title: "Oil column of the cylinder",
         about: cylinder::ABOUT,
         checks: cylinder::checks,
+    },
+    Group {
+        title: "Whole circuits: closed forms",
+        about: circuit_runs::ABOUT,
+        checks: circuit_runs::checks,
+    },
+    Group {
+        title: "Whole circuits: reference traces",
+        about: reference_traces::ABOUT,
+        checks: reference_traces::checks,
+    },
+    Group {
+        title: "Whole circuits: an earlier study",
+        about: earlier_study::ABOUT,
+        checks: earlier_study::checks,
     },
     Group {
         title: "Units",

@@ -3,6 +3,7 @@
 mod check;
 mod completions;
 mod convert;
+mod draw;
 mod new;
 mod parameters;
 mod run;
@@ -21,6 +22,7 @@ pub(crate) fn dispatch(arguments: Arguments) -> Result<ExitStatus, Failure> {
         None => run::run(&main_job(arguments.file)),
         Some(Command::Run(arguments)) => run::run(&arguments),
         Some(Command::Check(arguments)) => check::check(&arguments),
+        Some(Command::Draw(arguments)) => draw::draw(&arguments),
         Some(Command::New(arguments)) => new::new(&arguments),
         Some(Command::Parameters(arguments)) => parameters::parameters(&arguments),
         Some(Command::Convert(arguments)) => convert::convert(&arguments),

@@ -1,7 +1,7 @@
 //! Solves a circuit, prints the verdict table, writes traces and a figure.
 
-use helmsplit_sim::{RunEnd, SavedState};
-use helmsplit_study::{Solved, options_of, solve};
+use helmsplit_sim::{RunEnd, SavedState, SolverOptions};
+use helmsplit_study::{Solved, solve};
 
 use crate::args::RunArguments;
 use crate::exit::{ExitStatus, Failure};
@@ -18,7 +18,7 @@ pub(super) fn run(arguments: &RunArguments) -> Result<ExitStatus, Failure> {
         say(&format!("{}; nothing was written", solved.run.end));
         return Ok(ExitStatus::Cancelled);
     }
-    let options = options_of(&loaded.scenario);
+    let options = SolverOptions::from(&loaded.scenario.solver());
     let units = arguments.circuit.units;
     let mut files = Vec::new();
     if !arguments.no_files {
@@ -47,7 +47,7 @@ pub(super) fn run(arguments: &RunArguments) -> Result<ExitStatus, Failure> {
 
 /// Solves with progress and Ctrl-C.
 pub(super) fn solve_watched(loaded: &Loaded) -> Result<Solved, Failure> {
-    let options = options_of(&loaded.scenario);
+    let options = SolverOptions::from(&loaded.scenario.solver());
     let duration = loaded.scenario.solver().duration;
     let solved = watched(duration, |watch| {
         solve(&loaded.scenario, loaded.start.clone(), &options, watch)

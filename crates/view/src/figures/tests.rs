@@ -2,8 +2,8 @@
 
 use helmsplit_model::Signal;
 use helmsplit_scenario::{PRESETS, Preset, UnitSystem};
-use helmsplit_sim::Watch;
-use helmsplit_study::{Solved, options_of, solve};
+use helmsplit_sim::{SolverOptions, Watch};
+use helmsplit_study::{Solved, solve};
 
 use super::{RunFigure, run_figure, solved_figure};
 use crate::plot::{Figure, Panel};
@@ -15,7 +15,13 @@ fn solved(key: &str, seconds: f64) -> (helmsplit_scenario::Scenario, Solved) {
     scenario
         .set("manoeuvre.duration", &format!("{seconds} s"))
         .unwrap();
-    let solved = solve(&scenario, None, &options_of(&scenario), &mut Watch::none()).unwrap();
+    let solved = solve(
+        &scenario,
+        None,
+        &SolverOptions::from(&scenario.solver()),
+        &mut Watch::none(),
+    )
+    .unwrap();
     (scenario, solved)
 }
 

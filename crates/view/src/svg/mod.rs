@@ -7,6 +7,7 @@ mod limits;
 mod mark_rows;
 mod panel;
 mod pen;
+mod scene;
 mod sheet;
 mod spread;
 #[cfg(test)]
@@ -15,7 +16,15 @@ mod text_width;
 mod xml;
 
 use crate::plot::Figure;
+use crate::style::TextSize;
 use crate::theme::Theme;
+
+pub use scene::svg_from_scene;
+
+/// At most this wide a text will be, px, in any face of the type family.
+pub(crate) fn label_width(text: &str, size: TextSize) -> f64 {
+    text_width::text_width(text, size)
+}
 
 /// How a figure is written.
 #[derive(Debug, Clone, PartialEq)]

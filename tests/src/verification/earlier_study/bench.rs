@@ -1,0 +1,186 @@
+//! The valve on the bench, and the border of hunting.
+
+use helmsplit_model::Input;
+use helmsplit_sim::Start;
+
+use super::{EARLIER, LPM, number};
+use crate::bisection::root;
+use crate::check::Tolerance::Absolute;
+use crate::check::{Check, Subject};
+use crate::modes::{Mode, modes};
+use crate::rig::{AtRest, Rig, mean, range};
+use crate::trouble::Tried;
+
+const BENCH: Subject = Subject {
+    title: "Bench, 900 and 2400 rpm, 10, 70 and 130 bar behind the priority port, 2, 60 and 150 bar \
+            behind the excess port (guessed: throttles of 300 and 150 mm2)",
+    source: EARLIER,
+    unit: "L/min",
+};
+
+const OVER: Subject = Subject {
+    title: "Bench, 2400 rpm, 150 bar behind the excess port over 30 bar behind the priority port",
+    source: EARLIER,
+    unit: "L/min",
+};
+
+const HUNTING: Subject = Subject {
+    title: "Hunting",
+    source: EARLIER,
+    unit: "Hz",
+};
+
+/// The bench with its throttles wide open: pressure sources in all but name.
+fn wide_bench(speed: &str, steering: &str, excess: &str) -> Tried<Rig> {
+    Rig::bench(speed, steering, excess)?
+        .hold(Input::BenchArea, "300 mm2")?
+        .set("excess.outlet_area", "150 mm2")
+}
+
+/// The bench at every point of its grid, friction left out: at rest it changes nothing.
+fn grid() -> Tried<Vec<AtRest>> {
+    let mut all = Vec::new();
+    for speed in ["900 rpm", "2400 rpm"] {
+        for steering in ["10 bar", "70 bar", "130 bar"] {
+            for excess in ["2 bar", "60 bar", "150 bar"] {
+                let rig = wide_bench(speed, steering, excess)?;
+                all.push(rig.set("valve.coulomb_friction", "0 N")?.rest()?);
+            }
+        }
+    }
+    Ok(all)
+}
+
+/// Least and largest priority flow at rest over the grid of the bench, L/min.
+fn bench_grid() -> Tried<(f64, f64)> {
+    let flows = grid()?.into_iter().map(|rest| rest.priority_flow() * LPM);
+    let none = (f64::INFINITY, f64::NEG_INFINITY);
+    Ok(flows.fold(none, |(least, most), flow| {
+        (least.min(flow), most.max(flow))
+    }))
+}
+
+/// Least damping ratio over the grid of the bench.
+fn bench_damping() -> Tried<f64> {
+    let least = |rest: &AtRest| modes(rest).first().map_or(f64::NAN, |mode| mode.damping);
+    Ok(grid()?.iter().map(least).fold(f64::INFINITY, f64::min))
+}
+
+/// Least damped mode at 2400 rpm, 130 and 2 bar with a disc hole of a diameter in mm.
+fn mode_with_disc_hole(diameter: f64) -> Tried<Mode> {
+    let rest = wide_bench("2400 rpm", "130 bar", "2 bar")?
+        .set("valve.coulomb_friction", "0 N")?
+        .set("valve.disc_hole_diameter", &format!("{diameter} mm"))?
+        .rest()?;
+    Ok(*modes(&rest).first().ok_or("no mode")?)
+}
+
+/// Disc hole at which the bench begins to hunt, mm.
+fn border() -> f64 {
+    root(0.5, 0.8, |diameter| {
+        mode_with_disc_hole(diameter).map_or(f64::NAN, |mode| mode.damping)
+    })
+}
+
+fn throttled(start: &str, end: &str) -> Tried<f64> {
+    let rig = Rig::bench("2400 rpm", "30 bar", "150 bar")?
+        .set("valve.holes_throttle_end", end)?
+        .set("valve.holes_throttle_start", start)?;
+    Ok(rig.rest()?.priority_flow() * LPM)
+}
+
+/// Frequency (Hz) and peak to peak inlet pressure (bar) of the carrier with wide damping holes,
+/// while it steers.
+fn hunting() -> Tried<(f64, f64)> {
+    let run = Rig::preset("orchard_carrier")?
+        .set("excess.kind", "tank")?
+        .set("valve.head_hole_diameter", "1.5 mm")?
+        .set("valve.disc_hole_diameter", "1.5 mm")?
+        .hold(Input::EngineSpeed, "2400 rpm")?
+        .drive(
+            Input::WheelRate,
+            &[("0.5 s", "0 rpm"), ("0.55 s", "90 rpm")],
+        )?
+        .run(&Start::Cold, 1.4)?;
+    let (low, high) = range(&run, "p_in", 1.0, 1.4);
+    let middle = mean(&run, "p_in", 1.0, 1.4);
+    let points: Vec<_> = run
+        .trace
+        .named("p_in")?
+        .points()
+        .filter(|(t, _)| *t >= 1.0)
+        .collect();
+    let rises: Vec<f64> = points
+        .windows(2)
+        .filter(|pair| pair[0].1 < middle && pair[1].1 >= middle)
+        .map(|pair| pair[1].0)
+        .collect();
+    let (Some(first), Some(last)) = (rises.first(), rises.last()) else {
+        return Err("it does not hunt".into());
+    };
+    Ok((
+        (rises.len() - 1) as f64 / (last - first),
+        (high - low) / 1e5,
+    ))
+}
+
+#[allow(clippy::too_many_lines, reason = "a table of cases")]
+pub(super) fn push(all: &mut Vec<Check>) {
+    let of_grid = |pick: fn((f64, f64)) -> f64| move || number(bench_grid().map(pick));
+    all.push(BENCH.check(
+        "earlier-bench-least",
+        "least priority flow at rest",
+        14.50,
+        Absolute(0.01),
+        of_grid(|(least, _)| least),
+    ));
+    all.push(BENCH.check(
+        "earlier-bench-most",
+        "largest priority flow at rest",
+        15.58,
+        Absolute(0.01),
+        of_grid(|(_, most)| most),
+    ));
+    all.push(BENCH.in_unit("").check(
+        "earlier-bench-damping",
+        "least damping ratio, friction left out",
+        0.114,
+        Absolute(1e-3),
+        || number(bench_damping()),
+    ));
+    all.push(OVER.check(
+        "earlier-throttled",
+        "priority flow, priority holes throttled by the spool",
+        14.97,
+        Absolute(0.01),
+        || number(throttled("3 mm", "6 mm")),
+    ));
+    all.push(OVER.check(
+        "earlier-unthrottled",
+        "priority flow, priority holes never throttled",
+        46.3,
+        Absolute(0.05),
+        || number(throttled("100 mm", "1000 mm")),
+    ));
+    all.push(HUNTING.in_unit("mm").check(
+        "earlier-border-hole",
+        "bench, 2400 rpm, 130 and 2 bar: disc hole at the border, friction left out",
+        0.656,
+        Absolute(1e-3),
+        border,
+    ));
+    all.push(HUNTING.check(
+        "earlier-border-frequency",
+        "the same: frequency at the border",
+        59.6,
+        Absolute(0.1),
+        || number(mode_with_disc_hole(border()).map(|mode| mode.frequency)),
+    ));
+    all.push(HUNTING.check(
+        "earlier-hunting-frequency",
+        "excess to tank, 2400 rpm, damping holes 1.5 and 1.5 mm, while the wheel turns",
+        73.0,
+        Absolute(1.0),
+        || number(hunting().map(|(frequency, _)| frequency)),
+    ));
+}
