@@ -11,7 +11,9 @@ fn painter_with(image: ColorImage) -> Painter {
     let mut painter = Painter::new();
     let mut delta = TexturesDelta::default();
     delta.push(FONT, ImageDelta::full(image, TextureOptions::NEAREST));
-    painter.take_textures(&mut delta).unwrap();
+    painter
+        .take_textures(&mut delta)
+        .expect("the atlas is an image");
     assert!(delta.is_empty(), "the painter took everything");
     painter
 }
@@ -44,7 +46,7 @@ fn draw(painter: &Painter, mesh: Mesh, clip_rect: Rect, scale: f32) -> Picture {
     };
     painter
         .paint(&[primitive], SIZE, scale, Color32::BLACK)
-        .unwrap()
+        .expect("its textures are known")
 }
 
 fn count(picture: &Picture, colour: Color32) -> usize {
