@@ -75,7 +75,7 @@ impl Lines {
     }
 }
 
-/// Bytes that begin a character: in UTF-8 all but those of the form 10xxxxxx.
+/// Bytes that begin a character: in UTF-8 all but those whose two highest bits are 1 and 0.
 fn beginnings(bytes: &[u8]) -> usize {
     bytes.iter().filter(|byte| **byte & 0xc0 != 0x80).count()
 }
