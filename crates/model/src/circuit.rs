@@ -1,28 +1,22 @@
 //! A circuit: parts joined by their nodes, ready to be integrated.
 
 use crate::accounts::Accounts;
-use crate::dual::Dual;
 use crate::layout::{ABSENT, Layout};
 use crate::parts::{ExcessSide, Parts, PrimeMover, SteeringSide};
 use crate::profile::{Input, Inputs};
-use crate::real::Real;
 use crate::signal::{Observer, Readings, Signal, Unobserved};
+use crate::sparsity::Sparsity;
 use crate::state::StateInfo;
 
 /// Most states that one circuit can have: line segments are what adds up.
 pub const MOST_STATES: usize = 128;
-
-/// Widths of the dual number: the smallest that holds all columns is used in one pass, and the
-/// largest in several passes beyond.
-const NARROW: usize = 12;
-const MIDDLE: usize = 20;
-const WIDE: usize = 28;
 
 /// Parts and layout of one circuit. Parameters are fixed; states and inputs come with each call.
 #[derive(Debug, Clone, PartialEq)]
 pub struct Circuit {
     pub(crate) parts: Parts,
     pub(crate) layout: Layout,
+    pub(crate) sparsity: Sparsity,
     signals: Vec<Signal>,
 }
 
@@ -70,8 +64,10 @@ impl Circuit {
         let mut circuit = Self {
             parts,
             layout,
+            sparsity: Sparsity::default(),
             signals: Vec::new(),
         };
+        circuit.sparsity = circuit.find_sparsity();
         let inputs = Inputs::default();
         let mut readings = Readings::default();
         circuit.observe(&inputs, &circuit.cold_state(&inputs), &mut readings);
@@ -145,49 +141,6 @@ impl Circuit {
     /// [`Self::state_count`].
     pub fn derivatives(&self, inputs: &Inputs, states: &[f64], rates: &mut [f64]) {
         self.evaluate(inputs, states, rates, &mut Unobserved);
-    }
-
-    /// Exact Jacobian, column by column: `d rate_i / d state_j` at `j * n + i`.
-    pub fn jacobian(&self, inputs: &Inputs, states: &[f64], column_major: &mut [f64]) {
-        match self.state_count() {
-            n if n <= NARROW => {
-                self.columns::<NARROW, NARROW>(inputs, states, 0, column_major);
-            }
-            n if n <= MIDDLE => {
-                self.columns::<MIDDLE, MIDDLE>(inputs, states, 0, column_major);
-            }
-            n => {
-                for first in (0..n).step_by(WIDE) {
-                    self.columns::<WIDE, MOST_STATES>(inputs, states, first, column_major);
-                }
-            }
-        }
-    }
-
-    /// Columns `first .. first + N` of the Jacobian by one pass of the dual number; `ROOM` is at
-    /// least the number of states (clearing room that is not used would cost as much as the pass).
-    fn columns<const N: usize, const ROOM: usize>(
-        &self,
-        inputs: &Inputs,
-        states: &[f64],
-        first: usize,
-        column_major: &mut [f64],
-    ) {
-        let n = self.state_count();
-        let y: [Dual<N>; ROOM] = std::array::from_fn(|i| {
-            // A column outside this pass, also one that lies before it, is a constant.
-            states.get(i).map_or(Dual::constant(0.0), |&value| {
-                Dual::variable(value, i.wrapping_sub(first))
-            })
-        });
-        let mut dy = [Dual::<N>::constant(0.0); ROOM];
-        self.evaluate(inputs, &y[..n], &mut dy[..n], &mut Unobserved);
-        for column in first..n.min(first + N) {
-            let out = &mut column_major[column * n..(column + 1) * n];
-            for (entry, dual) in out.iter_mut().zip(&dy) {
-                *entry = dual.slopes[column - first];
-            }
-        }
     }
 
     /// All signals at one state (SI), replacing what `readings` held.

@@ -21,7 +21,7 @@ impl EndStop {
     #[inline(always)]
     pub fn force<S: Real>(&self, penetration: S, rate: S) -> S {
         if penetration.value() <= 0.0 {
-            return S::constant(0.0);
+            return S::constant_here(0.0, [penetration, rate]);
         }
         penetration.bivariate(rate, |s, rate| {
             (s * self.stiffness * (rate * self.loss + 1.0)).max_with(0.0)

@@ -136,11 +136,8 @@ impl Circuit {
             .edge
             .flow_given(oil, gear.neutral_area * (1.0 - u.abs()), p_e - ret);
         let lifting = u >= 0.0;
-        let (fed, emptied) = if lifting {
-            (p_cap, p_rod)
-        } else {
-            (p_rod, p_cap)
-        };
+        let fed = S::choose(lifting, p_cap, p_rod);
+        let emptied = S::choose(lifting, p_rod, p_cap);
         let supplied =
             gear.edge
                 .flow_checked(oil, S::constant(open), gear.check_pressure, p_e - fed);
@@ -154,11 +151,8 @@ impl Circuit {
             )
         };
         let (suction_cap, suction_rod) = (check(p_cap), check(p_rod));
-        let (in_cap, in_rod) = if lifting {
-            (supplied, -returned)
-        } else {
-            (-returned, supplied)
-        };
+        let in_cap = S::choose(lifting, supplied, -returned);
+        let in_rod = S::choose(lifting, -returned, supplied);
         self.evaluate_lift_cylinder(y, dy, o, gear, in_cap + suction_cap, in_rod + suction_rod);
         sums.to_return += neutral + returned - suction_cap - suction_rod;
         o.add(

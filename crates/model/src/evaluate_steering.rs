@@ -165,11 +165,8 @@ impl Circuit {
             None => S::constant(0.0),
         };
         let (shock_a, shock_b) = (shock(p_a), shock(p_b));
-        let (in_a, in_b) = if u.to_a {
-            (u.metered, -u.returned)
-        } else {
-            (-u.returned, u.metered)
-        };
+        let in_a = S::choose(u.to_a, u.metered, -u.returned);
+        let in_b = S::choose(u.to_a, -u.returned, u.metered);
         self.evaluate_cylinder(
             inputs,
             y,

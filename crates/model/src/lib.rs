@@ -18,16 +18,22 @@
 //! deformation of the valve body, eccentric spools, cavitation damage, and the mechanics of the
 //! machine beyond one mass, spring and friction at the steering cylinder.
 
+// The shared fixture of the tests names the crate as its users do.
+#[cfg(test)]
+extern crate self as helmsplit_model;
+
 mod accounts;
 mod circuit;
 mod compression;
 mod cylinder;
+mod dependence;
 mod dual;
 mod end_stop;
 mod evaluate;
 mod evaluate_excess;
 mod evaluate_steering;
 mod friction;
+mod jacobian;
 mod land;
 mod layout;
 mod line;
@@ -45,6 +51,7 @@ mod real;
 mod relief;
 mod signal;
 mod smooth;
+mod sparsity;
 mod state;
 mod steering_unit;
 

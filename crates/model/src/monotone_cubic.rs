@@ -45,10 +45,10 @@ impl MonotoneCubic {
     pub fn at<S: Real>(&self, x: S) -> (S, S) {
         let (first, last) = (self.points[0], self.points[self.points.len() - 1]);
         if x.value() <= first.0 {
-            return (S::constant(first.1), S::constant(0.0));
+            return (S::constant_here(first.1, [x]), S::constant_here(0.0, [x]));
         }
         if x.value() >= last.0 {
-            return (S::constant(last.1), S::constant(0.0));
+            return (S::constant_here(last.1, [x]), S::constant_here(0.0, [x]));
         }
         let right = self.points.partition_point(|p| p.0 <= x.value());
         let ((x0, y0), (x1, y1)) = (self.points[right - 1], self.points[right]);

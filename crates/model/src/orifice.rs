@@ -156,7 +156,7 @@ impl Edge {
     #[inline(always)]
     pub fn flow_checked<S: Real>(&self, oil: &Oil, area: S, opening_pressure: f64, dp: S) -> S {
         if dp.value() <= 0.0 {
-            return S::constant(0.0);
+            return S::constant_here(0.0, [area, dp]);
         }
         let (opening, drop) = (
             Dual::<2>::variable(area.value(), 0),

@@ -239,7 +239,7 @@ impl PriorityValve {
     #[inline(always)]
     fn land_leak<S: Real>(&self, travel: S, dp: S) -> S {
         if travel.value() - self.land.overlap >= LEAK_WIDTH {
-            return S::constant(0.0);
+            return S::constant_here(0.0, [travel, dp]);
         }
         travel.bivariate(dp, |travel, dp| {
             let closed = -travel + self.land.overlap;

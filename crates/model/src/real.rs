@@ -27,6 +27,23 @@ pub trait Real:
     /// A constant: derivatives are zero.
     fn constant(value: f64) -> Self;
 
+    /// A constant here, where a branch on values gives one, though these numbers decide elsewhere:
+    /// a shut check valve, a stop that is not touched. Derivatives are zero, but who asks what
+    /// depends on what ([`crate::Circuit::jacobian`] does, once a circuit) must hear of them.
+    #[inline(always)]
+    #[must_use]
+    fn constant_here<const K: usize>(value: f64, _of: [Self; K]) -> Self {
+        Self::constant(value)
+    }
+
+    /// One of two numbers, chosen by values or inputs. Write this and no `if` where the two depend
+    /// on different states, for the same reason as [`Self::constant_here`].
+    #[inline(always)]
+    #[must_use]
+    fn choose(first: bool, one: Self, other: Self) -> Self {
+        if first { one } else { other }
+    }
+
     /// The value without derivatives.
     fn value(self) -> f64;
 
@@ -134,7 +151,7 @@ pub trait Real:
     #[must_use]
     fn max_with(self, floor: f64) -> Self {
         if self.value() < floor {
-            Self::constant(floor)
+            Self::constant_here(floor, [self])
         } else {
             self
         }
@@ -145,7 +162,7 @@ pub trait Real:
     #[must_use]
     fn min_with(self, ceiling: f64) -> Self {
         if self.value() > ceiling {
-            Self::constant(ceiling)
+            Self::constant_here(ceiling, [self])
         } else {
             self
         }

@@ -23,9 +23,9 @@ pub fn ramp_slope<S: Real>(z: S, width: f64) -> S {
 pub fn smooth_step<S: Real>(u: S) -> S {
     let v = u.value();
     if v <= 0.0 {
-        S::constant(0.0)
+        S::constant_here(0.0, [u])
     } else if v >= 1.0 {
-        S::constant(1.0)
+        S::constant_here(1.0, [u])
     } else {
         let value = v * v * v * (v * (v * 6.0 - 15.0) + 10.0);
         let w = v * (1.0 - v);

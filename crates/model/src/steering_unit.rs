@@ -90,11 +90,8 @@ impl SteeringUnit {
             smooth_step((d - self.dead_band) * (1.0 / (self.full_deflection - self.dead_band)))
         });
         let to_a = deflection.value() >= 0.0;
-        let (fed, emptied) = if to_a {
-            chambers
-        } else {
-            (chambers.1, chambers.0)
-        };
+        let fed = S::choose(to_a, chambers.0, chambers.1);
+        let emptied = S::choose(to_a, chambers.1, chambers.0);
         let supply_area = open * self.supply_area;
         let metered =
             self.port_edge
@@ -125,7 +122,7 @@ impl SteeringUnit {
     fn wheel_reached<S: Real>(&self, deflection: S, wheel_rate: f64) -> S {
         let pushing = wheel_rate * deflection.value() > 0.0;
         if !pushing {
-            return S::constant(wheel_rate);
+            return S::constant_here(wheel_rate, [deflection]);
         }
         deflection.univariate(|d| {
             let inside = d.abs() - (self.stop_deflection - self.stop_band);
