@@ -22,7 +22,7 @@ const NOT_MODELLED: &str = "Temperature changes along the circuit; wave travel i
     friction at the steering cylinder.";
 
 /// Keys and what they do.
-const KEYS: [(&str, &str); 22] = [
+const KEYS: [(&str, &str); 28] = [
     ("Ctrl+O", "Open a circuit"),
     ("Ctrl+S", "Save"),
     ("Ctrl+Shift+S", "Save as"),
@@ -54,6 +54,18 @@ const KEYS: [(&str, &str); 22] = [
     ("Click or drag", "In the traces: put the cursor"),
     ("Drag, other button", "In the traces: zoom to the stretch"),
     ("Double click", "In the traces: whole run"),
+    (
+        "Space",
+        "In the traces and the drawing: play the run, and stop",
+    ),
+    (
+        "Left, Right",
+        "In the drawing: cursor by a step, with Shift by twenty; on a part: the next part",
+    ),
+    ("Enter", "On a part of the drawing: its card"),
+    ("Plus, Minus, 0", "In the drawing: larger, smaller, all"),
+    ("Ctrl+wheel", "Over the drawing: zoom around the pointer"),
+    ("Drag", "In a drawing that is zoomed: move it"),
 ];
 
 /// Draws the about page.

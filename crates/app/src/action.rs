@@ -8,6 +8,7 @@ use helmsplit_study::CheckId;
 
 use crate::command::{Command, Stage};
 use crate::dialogs::Dialog;
+use crate::drawing::Export;
 use crate::parts::Part;
 use crate::settings::Appearance;
 
@@ -24,6 +25,8 @@ pub(crate) enum Action {
     Open(PathBuf),
     Save,
     SaveAs(PathBuf),
+    /// Write a drawing.
+    Export(Export, PathBuf),
     /// Stop the solve.
     Cancel,
     Units(UnitSystem),

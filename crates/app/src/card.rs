@@ -1,7 +1,7 @@
-//! The list of parts and the card of the selected one.
+//! The row of parts and the card of the selected one.
 
 use egui::accesskit::Role;
-use egui::{Align, ComboBox, Layout, RichText, ScrollArea, Sense, Ui, WidgetInfo, vec2};
+use egui::{Align, ComboBox, Layout, RichText, ScrollArea, Ui, WidgetInfo, vec2};
 use helmsplit_scenario::Severity;
 use helmsplit_scenario::choice::Choice;
 
@@ -11,78 +11,46 @@ use crate::look::SMALL;
 use crate::parts::{PARTS, Part};
 use crate::quantity_field::{FieldContext, FieldStates, quantity_field};
 
-/// Height of a row of the list, points.
-const ROW: f32 = 21.0;
-
-/// Draws the list of parts, in two columns.
-pub(crate) fn part_list(
+/// Draws the menu of all parts, and beside it those that are not in the drawing.
+pub(crate) fn parts_row(
     ui: &mut Ui,
     selected: Part,
+    undrawn: &[Part],
     context: &FieldContext<'_>,
     actions: &mut Vec<Action>,
 ) {
-    let half = PARTS.len().div_ceil(2);
-    ui.horizontal_top(|ui| {
-        ui.spacing_mut().item_spacing = vec2(4.0, 0.0);
-        let width = (ui.available_width() - 4.0) / 2.0;
-        for column in [&PARTS[..half], &PARTS[half..]] {
-            ui.vertical(|ui| {
-                ui.set_width(width);
-                for &part in column {
-                    if part_row(ui, part, part == selected, width, context) {
-                        actions.push(Action::Select(part));
-                    }
+    ui.horizontal_wrapped(|ui| {
+        ui.spacing_mut().item_spacing = vec2(2.0, 2.0);
+        ui.spacing_mut().button_padding = vec2(5.0, 2.0);
+        ui.menu_button("All parts", |ui| {
+            for part in PARTS {
+                if ui.radio(part == selected, named(part, context)).clicked() {
+                    actions.push(Action::Select(part));
+                    ui.close();
                 }
-            });
+            }
+        });
+        for &part in undrawn {
+            let text = RichText::new(named(part, context)).size(SMALL + 1.0);
+            if ui.selectable_label(part == selected, text).clicked() {
+                actions.push(Action::Select(part));
+            }
         }
     });
 }
 
-/// One row; says whether it was clicked.
-fn part_row(
-    ui: &mut Ui,
-    part: Part,
-    selected: bool,
-    width: f32,
-    context: &FieldContext<'_>,
-) -> bool {
-    let look = context.look;
-    let (rect, response) = ui.allocate_exact_size(vec2(width, ROW), Sense::click());
-    response.widget_info(|| WidgetInfo::selected(Role::Button, true, selected, part.label));
-    let painter = ui.painter();
-    if selected || response.hovered() {
-        painter.rect_filled(rect, 3.0, look.hover());
-    }
-    if selected || response.has_focus() {
-        let bar = egui::Rect::from_min_size(rect.min, vec2(3.0, rect.height()));
-        painter.rect_filled(bar, 1.0, look.accent());
-    }
-    painter.text(
-        rect.left_center() + vec2(10.0, 0.0),
-        egui::Align2::LEFT_CENTER,
-        part.label,
-        egui::TextStyle::Body.resolve(ui.style()),
-        look.ink(),
-    );
+/// The name of a part, and whether something is wrong with it.
+fn named(part: Part, context: &FieldContext<'_>) -> String {
     let own = context.findings.iter();
     let worst = own
         .filter(|finding| Part::of(&finding.path) == Some(part))
         .map(|finding| finding.severity)
         .max();
-    if let Some(worst) = worst {
-        let (word, colour) = match worst {
-            Severity::Error => ("error", look.error()),
-            Severity::Warning => ("note", look.warning()),
-        };
-        painter.text(
-            rect.right_center() - vec2(6.0, 0.0),
-            egui::Align2::RIGHT_CENTER,
-            word,
-            egui::TextStyle::Small.resolve(ui.style()),
-            colour,
-        );
+    match worst {
+        Some(Severity::Error) => format!("{}: error", part.label),
+        Some(Severity::Warning) => format!("{}: note", part.label),
+        None => part.label.to_owned(),
     }
-    response.clicked()
 }
 
 /// Draws the card of a part.
@@ -94,7 +62,9 @@ pub(crate) fn card(
     actions: &mut Vec<Action>,
 ) {
     ui.horizontal(|ui| {
-        ui.heading(part.label);
+        let heading = ui.heading(part.label);
+        let name = format!("Card: {}", part.label);
+        heading.widget_info(|| WidgetInfo::labeled(Role::Heading, true, &name));
     });
     ScrollArea::vertical()
         .id_salt(part.section)

@@ -6,6 +6,7 @@ use egui::{Context, Id, Key, Modal, RichText, ScrollArea, TextEdit, Ui};
 
 use crate::about;
 use crate::action::Action;
+use crate::drawing::Export;
 use crate::look::Look;
 
 /// What lies over the window.
@@ -15,6 +16,8 @@ pub(crate) enum Dialog {
     Open { path: String },
     /// Save under another path.
     SaveAs { path: String },
+    /// Write a drawing under a path.
+    Export { export: Export, path: String },
     /// The circuit is edited and something else would replace it.
     Unsaved { next: Box<Action> },
     /// The list of keys.
@@ -50,11 +53,20 @@ pub(crate) fn dialog(
         match dialog {
             Dialog::Open { path } => {
                 ui.heading("Open a circuit");
-                ask_path(ui, path, "Path of a .circuit.ron file", "Open", actions);
+                let label = "Path of a .circuit.ron file";
+                ask_path(ui, path, (label, "Open"), actions, Action::Open);
             }
             Dialog::SaveAs { path } => {
                 ui.heading("Save the circuit as");
-                ask_path(ui, path, "Path of the file to write", "Save", actions);
+                let label = "Path of the file to write";
+                ask_path(ui, path, (label, "Save"), actions, Action::SaveAs);
+            }
+            Dialog::Export { export, path } => {
+                let export = *export;
+                ui.heading(export.name());
+                let label = "Path of the SVG file to write";
+                let make = |path| Action::Export(export, path);
+                ask_path(ui, path, (label, "Write"), actions, make);
             }
             Dialog::Unsaved { next } => unsaved(ui, next, actions),
             Dialog::Keys => about::keys(ui, look),
@@ -81,7 +93,14 @@ pub(crate) fn dialog(
     }
 }
 
-fn ask_path(ui: &mut Ui, path: &mut String, label: &str, button: &str, actions: &mut Vec<Action>) {
+/// Asks for a path; `make` makes the wish of it.
+fn ask_path(
+    ui: &mut Ui,
+    path: &mut String,
+    (label, button): (&str, &str),
+    actions: &mut Vec<Action>,
+    make: impl FnOnce(PathBuf) -> Action,
+) {
     ui.add_space(4.0);
     let label = ui.label(label);
     let field = Id::unique("path field");
@@ -98,12 +117,7 @@ fn ask_path(ui: &mut Ui, path: &mut String, label: &str, button: &str, actions: 
         let named = !path.trim().is_empty();
         let pressed = ui.add_enabled(named, egui::Button::new(button)).clicked();
         if named && (pressed || entered) {
-            let path = PathBuf::from(path.trim());
-            actions.push(if button == "Open" {
-                Action::Open(path)
-            } else {
-                Action::SaveAs(path)
-            });
+            actions.push(make(PathBuf::from(path.trim())));
         }
         if ui.button("Cancel").clicked() {
             actions.push(Action::CloseDialog);

@@ -15,6 +15,7 @@ mod card;
 mod command;
 mod dialogs;
 mod document;
+mod drawing;
 mod error;
 mod evidence;
 mod look;

@@ -48,6 +48,9 @@ pub(crate) const TITLE: f32 = 15.0;
 pub(crate) const BODY: f32 = 13.0;
 pub(crate) const SMALL: f32 = 11.0;
 
+/// How much of a colour is left where something is out of date.
+const PALE: f32 = 0.4;
+
 /// A theme colour as egui takes it.
 pub(crate) fn egui_colour(colour: Colour) -> Color32 {
     Color32::from_rgb(colour.red, colour.green, colour.blue)
@@ -120,6 +123,11 @@ impl Look {
     /// Behind a control at rest.
     pub(crate) fn control(&self) -> Color32 {
         egui_colour(self.window.control)
+    }
+
+    /// A colour of something that is out of date: nearer to the ground.
+    pub(crate) fn paled(&self, colour: Color32) -> Color32 {
+        egui_colour(self.theme.background).lerp_to_gamma(colour, PALE)
     }
 
     /// The colour of a verdict.

@@ -9,6 +9,7 @@ use helmsplit_scenario::presets::{PRESETS, Preset};
 use crate::action::Action;
 use crate::dialogs::Dialog;
 use crate::document::Document;
+use crate::drawing::Export;
 use crate::look::Look;
 use crate::settings::{Appearance, SCALES, Settings, units_name};
 
@@ -67,6 +68,15 @@ pub(crate) fn save_as(document: &Document) -> Action {
         |path| path.display().to_string(),
     );
     Action::Show(Dialog::SaveAs { path })
+}
+
+/// Asks for the path to write a drawing under.
+fn write_drawing(document: &Document, export: Export) -> Action {
+    let stem = document.scenario().name.to_lowercase().replace(' ', "_");
+    let name = format!("{stem}.{}", export.suffix());
+    let folder = document.folder().unwrap_or_default();
+    let path = folder.join(name).display().to_string();
+    Action::Show(Dialog::Export { export, path })
 }
 
 /// Draws the bar: menus, the name of the file, units.
@@ -132,6 +142,12 @@ fn file_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {
     item(ui, "Save", Some(SAVE), actions, || Action::Save);
     item(ui, "Save as...", Some(SAVE_AS), actions, || {
         save_as(document)
+    });
+    ui.menu_button("Export", |ui| {
+        for export in Export::ALL {
+            let text = format!("{}...", export.name());
+            item(ui, &text, None, actions, || write_drawing(document, export));
+        }
     });
     ui.separator();
     item(ui, "Quit", Some(QUIT), actions, || Action::Quit);

@@ -1,10 +1,11 @@
-//! The response page: parts and their card on the left, traces on the right, evidence on demand.
+//! The response page: the drawing and the card of a part on the left, traces on the right, evidence on demand.
 
 use egui::{CentralPanel, Frame, Margin, Panel, RichText, Ui};
 use helmsplit_study::{Check, CheckId};
 
 use crate::action::Action;
-use crate::card::{card, part_list};
+use crate::card::{card, parts_row};
+use crate::drawing::{DrawingState, Source, drawings};
 use crate::evidence::evidence;
 use crate::look::SMALL;
 use crate::parts::Part;
@@ -12,8 +13,12 @@ use crate::quantity_field::{FieldContext, FieldStates};
 use crate::text::on_screen;
 use crate::traces::{Shown, TraceView, traces};
 
-/// Narrowest and widest pane of parts, points.
-const PARTS_WIDTH: std::ops::RangeInclusive<f32> = 340.0..=560.0;
+/// Narrowest pane of the drawing, and what is left to the traces, points.
+const DRAWING_WIDTH: f32 = 340.0;
+const TRACES_WIDTH: f32 = 360.0;
+
+/// Share of the width that the drawing takes at first.
+const DRAWING_SHARE: f32 = 0.42;
 
 /// Narrowest and widest pane of evidence, points.
 const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
@@ -21,6 +26,8 @@ const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
 /// What the page shows.
 pub(crate) struct Page<'a> {
     pub(crate) fields: FieldContext<'a>,
+    /// `None` if the present circuit cannot be made and there is no run.
+    pub(crate) drawn: Option<Source<'a>>,
     pub(crate) selected: Part,
     /// The check whose evidence is open.
     pub(crate) evidence: Option<CheckId>,
@@ -36,19 +43,32 @@ pub(crate) fn response_page(
     ui: &mut Ui,
     page: &Page<'_>,
     states: &mut FieldStates,
-    view: &mut TraceView,
+    (view, drawing): (&mut TraceView, &mut DrawingState),
     actions: &mut Vec<Action>,
 ) {
     let look = page.fields.look;
+    let widest = (ui.available_width() - TRACES_WIDTH).max(DRAWING_WIDTH + 1.0);
     let frame = Frame::NONE
         .fill(ui.visuals().panel_fill)
         .inner_margin(Margin::symmetric(10, 6));
-    Panel::left("parts")
+    // The scale of the window takes effect after its first frame: each has its own width.
+    let scale = (100.0 * ui.ctx().zoom_factor()).round() as u32;
+    Panel::left(("drawing", scale))
         .frame(frame)
-        .default_size(372.0)
-        .size_range(PARTS_WIDTH)
+        .default_size((DRAWING_SHARE * ui.available_width()).clamp(DRAWING_WIDTH, widest))
+        .size_range(DRAWING_WIDTH..=widest)
         .show(ui, |ui| {
-            part_list(ui, page.selected, &page.fields, actions);
+            let whole = page
+                .shown
+                .as_ref()
+                .and_then(|shown| shown.figure.time_range());
+            match &page.drawn {
+                Some(source) => drawings(ui, source, drawing, (view, whole), actions),
+                None => {
+                    ui.weak("The circuit cannot be drawn: see what its cards say.");
+                }
+            }
+            parts_row(ui, page.selected, &drawing.undrawn(), &page.fields, actions);
             ui.separator();
             card(ui, page.selected, &page.fields, states, actions);
         });

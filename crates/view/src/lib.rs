@@ -23,6 +23,7 @@ pub mod figures;
 mod moment;
 pub mod plot;
 mod ramp;
+mod readings;
 mod scale_bar;
 pub mod scene;
 pub mod style;
@@ -38,6 +39,7 @@ pub use drawing::valve_scene;
 pub use error::ViewError;
 pub use moment::Moment;
 pub use ramp::{PressureScale, Ramp};
+pub use readings::{Reading, part_readings};
 pub use svg::{SvgOptions, svg_from_figure, svg_from_scene};
 pub use table::{Column, TextTable};
 pub use theme::{

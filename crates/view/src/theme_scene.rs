@@ -31,6 +31,14 @@ impl Theme {
         }
     }
 
+    /// Width of the ink around the oil of a line that is shaded by pressure, px: it also keeps that
+    /// end of the ramp in sight that is near the background.
+    #[must_use]
+    pub fn casing_width(&self, line: Line) -> f64 {
+        const CASING: f64 = 1.6;
+        self.oil_width(line) + CASING
+    }
+
     /// The colour of a filling.
     #[must_use]
     pub fn paint(&self, paint: Paint) -> Colour {

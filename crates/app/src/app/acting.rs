@@ -3,7 +3,10 @@
 use std::path::Path;
 
 use egui::{Context, ViewportCommand};
+use helmsplit_scenario::write::save_atomically;
 use helmsplit_study::CheckId;
+use helmsplit_view::Moment;
+use helmsplit_view::diagram::DrawingOptions;
 use helmsplit_view::figures::solved_figure;
 
 use super::HelmsplitApp;
@@ -11,6 +14,7 @@ use crate::action::Action;
 use crate::command::{Command, Stage, Target};
 use crate::dialogs::Dialog;
 use crate::document::Document;
+use crate::drawing::{self, Export};
 use crate::menu;
 use crate::traces::TraceView;
 use crate::worker::{Failure, Quality};
@@ -31,6 +35,7 @@ impl HelmsplitApp {
             Action::Discarding(next) => self.replace(context, *next),
             Action::Save => self.save(),
             Action::SaveAs(path) => self.save_as(&path),
+            Action::Export(export, path) => self.export(export, &path),
             Action::Cancel => {
                 self.worker.cancel();
                 self.failure = Some(Failure {
@@ -111,6 +116,7 @@ impl HelmsplitApp {
                 self.document = document;
                 self.fields.clear();
                 self.view = TraceView::default();
+                self.drawing.stop();
                 self.evidence = None;
                 self.failure = None;
                 self.notice.clear();
@@ -146,6 +152,42 @@ impl HelmsplitApp {
                 };
             }
             Err(error) => self.dialog = Some(Dialog::problem("The circuit was not saved", error)),
+        }
+    }
+
+    /// Writes a drawing at the cursor, in the colours of the window.
+    fn export(&mut self, export: Export, path: &Path) {
+        let circuit = match &self.answer {
+            Some(answer) => Ok(answer.solved.circuit.clone()),
+            None => self.document.scenario().circuit(),
+        };
+        let circuit = match circuit {
+            Ok(circuit) => circuit,
+            Err(findings) => {
+                let findings: Vec<_> = findings.iter().map(ToString::to_string).collect();
+                let title = "The circuit cannot be drawn";
+                self.dialog = Some(Dialog::problem(title, findings.join("\n")));
+                return;
+            }
+        };
+        let trace = self.answer.as_ref().map(|answer| &answer.solved.run.trace);
+        let moment = trace.and_then(|trace| Moment::of(trace, self.view.cursor));
+        let options = DrawingOptions {
+            units: self.settings.units,
+            values: self.drawing.shows_values(),
+            ..DrawingOptions::default()
+        };
+        let name = &self.document.scenario().name;
+        let shown = (&circuit, moment.as_ref());
+        let svg = drawing::svg(export, name, shown, options, &self.look.theme);
+        match save_atomically(path, &svg) {
+            Ok(()) => {
+                self.dialog = None;
+                self.notice = format!("Wrote {}", path.display());
+            }
+            Err(error) => {
+                self.dialog = Some(Dialog::problem("The drawing was not written", error));
+            }
         }
     }
 

@@ -7,6 +7,7 @@ use std::time::Duration;
 
 use eframe::{App, CreationContext, Frame};
 use egui::{Context, Ui, ViewportCommand};
+use helmsplit_model::Circuit;
 use helmsplit_scenario::Severity;
 use helmsplit_study::{Check, CheckId};
 use helmsplit_view::figures::solved_figure;
@@ -15,6 +16,7 @@ use helmsplit_view::plot::Figure;
 use crate::action::Action;
 use crate::dialogs::{Dialog, dialog};
 use crate::document::Document;
+use crate::drawing::{DrawingState, Source};
 use crate::error::AppError;
 use crate::look::Look;
 use crate::menu;
@@ -44,6 +46,9 @@ pub struct HelmsplitApp {
     settings: Settings,
     look: Look,
     view: TraceView,
+    drawing: DrawingState,
+    /// The circuit of a revision, drawn while there is no run; `None` if it cannot be made.
+    draft: Option<(u64, Option<Circuit>)>,
     fields: FieldStates,
     selected: Part,
     evidence: Option<CheckId>,
@@ -85,6 +90,8 @@ impl HelmsplitApp {
             settings,
             look: Look::load(false)?,
             view: TraceView::default(),
+            drawing: DrawingState::default(),
+            draft: None,
             fields: FieldStates::default(),
             selected: PARTS[3],
             evidence: None,
@@ -246,6 +253,17 @@ impl HelmsplitApp {
         }
     }
 
+    /// Makes the present circuit, as long as there is no run to draw.
+    fn make_draft(&mut self) {
+        let revision = self.document.revision();
+        if self.answer.is_some() {
+            self.draft = None;
+        } else if self.draft.as_ref().is_none_or(|(old, _)| *old != revision) {
+            let circuit = self.document.scenario().circuit().ok();
+            self.draft = Some((revision, circuit));
+        }
+    }
+
     fn draw(&mut self, ui: &mut Ui, actions: &mut Vec<Action>) {
         let answer = self.answer.clone();
         let checks: &[Check] = answer.as_ref().map_or(&[], |answer| &answer.solved.checks);
@@ -269,7 +287,23 @@ impl HelmsplitApp {
             };
             status_line(ui, &status, actions);
         });
+        self.make_draft();
+        let draft = self.draft.as_ref();
+        let draft = draft.and_then(|(revision, circuit)| Some((*revision, circuit.as_ref()?)));
+        let solved = answer.as_ref().map(|answer| &answer.solved);
+        let drawn = solved.map_or(draft, |solved| Some((self.generation, &solved.circuit)));
+        let source = drawn.map(|(generation, circuit)| Source {
+            circuit,
+            trace: solved.map(|solved| &solved.run.trace),
+            generation,
+            units: self.settings.units,
+            look: &self.look,
+            pale: stale,
+            selected: self.selected,
+            findings: self.document.findings(),
+        });
         let page = Page {
+            drawn: source,
             fields: FieldContext {
                 scenario: self.document.scenario(),
                 findings: self.document.findings(),
@@ -287,7 +321,8 @@ impl HelmsplitApp {
             }),
             trouble: self.failure.as_ref().map(|failure| failure.reason.as_str()),
         };
-        response_page(ui, &page, &mut self.fields, &mut self.view, actions);
+        let views = (&mut self.view, &mut self.drawing);
+        response_page(ui, &page, &mut self.fields, views, actions);
         if let Some(open) = &mut self.dialog {
             dialog(ui.ctx(), open, &self.look, actions);
         }

@@ -73,6 +73,7 @@ pub(crate) fn traces(ui: &mut Ui, shown: &Shown<'_>, view: &mut TraceView) {
             response.widget_info(|| {
                 WidgetInfo::labeled(egui::Role::GraphicsDocument, true, "Traces over time")
             });
+            view.focused = response.has_focus();
             input::take(ui, &response, plot, whole, view);
             let range = view.range(whole);
             let key = Key {

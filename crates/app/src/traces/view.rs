@@ -15,6 +15,8 @@ pub(crate) struct TraceView {
     zoom: Option<(f64, f64)>,
     /// Whether the value axes follow what is in view.
     pub(crate) follow: bool,
+    /// Whether the traces had the focus when they were last drawn.
+    pub(crate) focused: bool,
     /// Where a stretch to zoom to was begun, s.
     pub(crate) selecting: Option<f64>,
     hidden: BTreeSet<String>,
@@ -27,6 +29,7 @@ impl Default for TraceView {
             cursor: 0.0,
             zoom: None,
             follow: true,
+            focused: false,
             selecting: None,
             hidden: BTreeSet::new(),
             drawn: None,

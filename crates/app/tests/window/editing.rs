@@ -195,7 +195,7 @@ fn units_switch_everywhere_at_once() {
 #[test]
 fn another_choice_brings_other_fields_and_other_traces() {
     let mut rig = Rig::new();
-    rig.click("Excess side");
+    rig.click("Excess motor");
     rig.harness
         .get_by_role_and_label(egui::accesskit::Role::ComboBox, "Excess side")
         .click();

@@ -26,12 +26,17 @@ impl Rig {
     }
 
     pub(crate) fn with(size: [f32; 2], appearance: Appearance, preset: &str) -> Self {
+        Self::scaled(size, 100, appearance, preset)
+    }
+
+    /// A window of `size` (px) in which everything is drawn at `scale` (per cent).
+    pub(crate) fn scaled(size: [f32; 2], scale: u16, appearance: Appearance, preset: &str) -> Self {
         let preset = Preset::from_key(preset).expect("a preset of that name");
         let document = Document::from_preset(&preset).expect("presets read");
         let settings = Settings {
             appearance,
             units: UnitSystem::Metric,
-            scale: 100,
+            scale,
         };
         let harness = Harness::builder()
             .with_size(size)

@@ -13,12 +13,19 @@ use crate::style::TextSize;
 use crate::unit_text::unit_text;
 
 /// What is shown beside the symbols.
-#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+#[derive(Debug, Clone, Copy, PartialEq)]
 pub struct DrawingOptions {
     /// Units of all values. Default: metric.
     pub units: UnitSystem,
     /// Whether pressures, flows and speeds of the moment stand beside the lines. Default: yes.
     pub values: bool,
+    /// Whether a drawing that is shaded by pressure has the scale of the shades below it. Default:
+    /// yes.
+    pub scale_bar: bool,
+    /// Length of the valve in section, px at 100 %; texts and lines keep their size. Default: 800.
+    pub section_length: f64,
+    /// Whether names, sizes and the scale of travel stand around the section. Default: yes.
+    pub notes: bool,
 }
 
 impl Default for DrawingOptions {
@@ -26,6 +33,9 @@ impl Default for DrawingOptions {
         Self {
             units: UnitSystem::Metric,
             values: true,
+            scale_bar: true,
+            section_length: 800.0,
+            notes: true,
         }
     }
 }
@@ -157,6 +167,7 @@ impl<'a> Context<'a> {
             direction,
             length,
             paint: Paint::Ink,
+            pace: share.min(1.0),
         });
     }
 

@@ -91,7 +91,7 @@ impl Context<'_> {
 
     fn excess_bench(&self) -> Part {
         let (x, top) = (CONSUMER_X, EXCESS_Y + 56.0);
-        let mut pen = PartPen::new("excess.bench", "Bench load");
+        let mut pen = PartPen::new("excess.bench", "Excess bench load");
         self.bench_column(&mut pen, (x, top), DOWN, "p_e", Signal::ExcessOutFlow);
         let foot = top + BENCH_LENGTH;
         let end = self.working("tank");

@@ -71,7 +71,7 @@ pub fn circuit_scene(circuit: &Circuit, moment: Option<&Moment>, options: Drawin
     context.priority_relief(&mut parts);
     context.excess(&mut parts);
     let description = described(&context, &parts);
-    if let Some(moment) = moment {
+    if let (Some(moment), true) = (moment, options.scale_bar) {
         parts.push(scale_bar(
             SCALE_BAR,
             context.scale,

@@ -51,7 +51,7 @@ impl Context<'_> {
 
     fn priority_bench(&self) -> Part {
         let x = PRIORITY_X;
-        let mut pen = PartPen::new("steering.bench", "Bench load");
+        let mut pen = PartPen::new("steering.bench", "Priority bench load");
         self.bench_column(&mut pen, (x, 290.0), UP, "p_su", Signal::BenchFlow);
         let over = 290.0 - BENCH_LENGTH;
         let tank_x = x + 74.0;

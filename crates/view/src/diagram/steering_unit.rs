@@ -126,8 +126,13 @@ impl Context<'_> {
             return;
         };
         let direction = if sign * velocity > 0.0 { UP } else { DOWN };
-        let tip = (at.0, at.1 + 5.0 * direction.y);
-        pen.head(tip, direction, 10.0);
+        pen.push(Prim::Arrow {
+            tip: (at.0, at.1 + 5.0 * direction.y).into(),
+            direction,
+            length: 10.0,
+            paint: Paint::Ink,
+            pace: (velocity.abs() / FAST).min(1.0),
+        });
     }
 
     fn unit_checks(&self, pen: &mut PartPen, shock: bool) {
@@ -205,6 +210,9 @@ impl Context<'_> {
 
 /// Below this velocity the cylinder stands still, m/s.
 const LEAST_VELOCITY: f64 = 5e-4;
+
+/// A fast cylinder, m/s.
+const FAST: f64 = 0.1;
 
 fn rod(pen: &mut PartPen, (from, to): (f64, f64), y: f64) {
     pen.frame(Rect::new(from, y - 4.0, to, y + 4.0));

@@ -127,7 +127,7 @@ fn no_text_touches_a_line_or_a_text_whatever_sits_in_the_slots() {
         let sign = if index % 2 == 0 { 1.0 } else { -1.0 };
         let options = DrawingOptions {
             units: units[(index / 2) % 3],
-            values: true,
+            ..DrawingOptions::default()
         };
         let moment = busy_moment(&circuit, sign);
         for moment in [None, Some(&moment)] {

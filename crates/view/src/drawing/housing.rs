@@ -86,6 +86,7 @@ impl Sheet<'_> {
             length: 2.0 * half,
             // Light or dark, it stands out against the oil around it.
             paint: Paint::Ground,
+            pace: (flow.abs() / LARGE_FLOW).min(1.0),
         });
     }
 

@@ -33,8 +33,12 @@ const TO_TRAVEL: f64 = 64.0;
 /// From the travel scale down to the pressure scale, px.
 const TO_PRESSURE: f64 = 76.0;
 
-/// Left ends of both scales, px.
-const SCALES_X: f64 = 180.0;
+/// Left ends of both scales, as a share of the length of the section, and at least this far from
+/// its left end, px: their names stand there.
+const SCALES_X: (f64, f64) = (0.225, 112.0);
+
+/// No section is shorter, px.
+const SHORTEST: f64 = 120.0;
 
 /// The valve of a circuit in section, with the spool at `travel` (m), or at that of the moment, or
 /// sprung shut. With a moment, the oil is shaded by pressure on the scale of the whole circuit.
@@ -62,15 +66,20 @@ pub fn valve_scene(
     let valve = &circuit.parts().valve;
     let travel = travel.or(moment.map(Moment::travel)).unwrap_or(0.0);
     let scale = PressureScale::of(circuit.parts());
-    let sheet = Sheet::new(Proportions::of(valve), travel * 1000.0, moment, scale);
+    let length = options.section_length.max(SHORTEST);
+    let shape = Proportions::of(valve);
+    let sheet = Sheet::new(shape, travel * 1000.0, moment, (scale, length));
     let mut parts: Vec<Part> = Vec::new();
     sheet.body(&mut parts);
     sheet.moving(&mut parts);
-    let foot = sheet.notes(&mut parts, valve, options);
-    let at = (SCALES_X, foot + TO_TRAVEL);
-    parts.push(sheet.travel_scale(at, options));
-    if let Some(moment) = moment {
-        let at = (SCALES_X, at.1 + TO_PRESSURE);
+    let x = (SCALES_X.0 * length).max(SCALES_X.1);
+    let mut foot = sheet.at(0.0, -sheet.half_height).1;
+    if options.notes {
+        foot = sheet.notes(&mut parts, valve, options) + TO_TRAVEL;
+        parts.push(sheet.travel_scale((x, foot), options));
+    }
+    if let (Some(moment), true) = (moment, options.scale_bar) {
+        let at = (x, foot + TO_PRESSURE);
         parts.push(scale_bar(at, scale, options.units, moment.time));
     }
     let description = described(&sheet, options);

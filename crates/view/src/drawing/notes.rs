@@ -15,6 +15,9 @@ const GAP: f64 = 16.0;
 /// From the housing to the nearer edge of a row of notes, px.
 const DISTANCE: f64 = 22.0;
 
+/// Between two rows, px.
+const ROW_GAP: f64 = 10.0;
+
 /// Height of a row: name and detail, px.
 pub(super) const ROW: f64 = 2.0 * LINE_SPACING;
 
@@ -34,21 +37,65 @@ impl Note {
     }
 }
 
-/// Middles for notes side by side, in order, near what they point at.
-fn places(notes: &[Note], (low, high): (f64, f64)) -> Vec<f64> {
-    let widths: Vec<f64> = notes.iter().map(Note::width).collect();
-    let mut middles: Vec<f64> = notes.iter().map(|note| note.target.0).collect();
+/// Where a note stands.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct Place {
+    /// Middle of its text, px.
+    middle: f64,
+    /// Where its leader leaves the text, px.
+    leader: f64,
+    /// Whether it stands in the further row.
+    far: bool,
+}
+
+/// Middles for texts side by side, in order, near what they want; each is a middle and a width.
+fn side_by_side(texts: &[(f64, f64)], (low, high): (f64, f64)) -> Vec<f64> {
+    let mut middles: Vec<f64> = texts.iter().map(|text| text.0).collect();
     let mut edge = low;
-    for (middle, width) in middles.iter_mut().zip(&widths) {
+    for (middle, (_, width)) in middles.iter_mut().zip(texts) {
         *middle = middle.max(edge + 0.5 * width);
         edge = *middle + 0.5 * width + GAP;
     }
     let mut edge = high;
-    for (middle, width) in middles.iter_mut().zip(&widths).rev() {
+    for (middle, (_, width)) in middles.iter_mut().zip(texts).rev() {
         *middle = middle.min(edge - 0.5 * width);
         edge = *middle - 0.5 * width - GAP;
     }
     middles
+}
+
+/// Places for notes: all in one row if there is room, else every other one in a further row, whose
+/// leaders pass between the notes of the nearer one.
+fn places(notes: &[Note], room: (f64, f64)) -> Vec<Place> {
+    let widths: Vec<f64> = notes.iter().map(Note::width).collect();
+    let needed = widths.iter().sum::<f64>() + GAP * widths.len().saturating_sub(1) as f64;
+    let two_rows = needed > room.1 - room.0;
+    let is_far = |index: usize| two_rows && index % 2 == 1;
+    let near: Vec<(f64, f64)> = (0..notes.len())
+        .map(|index| {
+            let width = if is_far(index) { 0.0 } else { widths[index] };
+            (notes[index].target.0, width)
+        })
+        .collect();
+    let leaders = side_by_side(&near, room);
+    let far: Vec<(f64, f64)> = (0..notes.len())
+        .filter(|&index| is_far(index))
+        .map(|index| (leaders[index], widths[index]))
+        .collect();
+    let mut far = side_by_side(&far, room).into_iter();
+    let place = |(index, leader): (usize, f64)| match is_far(index) {
+        true => Place {
+            middle: far.next().unwrap_or(leader),
+            leader,
+            far: true,
+        },
+        false => Place {
+            middle: leader,
+            leader,
+            far: false,
+        },
+    };
+    leaders.into_iter().enumerate().map(place).collect()
 }
 
 impl Sheet<'_> {
@@ -66,14 +113,20 @@ impl Sheet<'_> {
             self.at(self.right, 0.0).0 + 40.0,
         );
         let above = self.notes_above(valve, options);
-        for (note, x) in above.iter().zip(places(&above, room)) {
-            parts.push(drawn(note, (x, top - DISTANCE - ROW), top - DISTANCE));
+        for (note, place) in above.iter().zip(places(&above, room)) {
+            parts.push(drawn(note, place, top - DISTANCE, -1.0));
         }
         let below = self.notes_below(valve, options);
-        for (note, x) in below.iter().zip(places(&below, room)) {
-            parts.push(drawn(note, (x, foot + DISTANCE), foot + DISTANCE));
+        let places = places(&below, room);
+        for (note, place) in below.iter().zip(&places) {
+            parts.push(drawn(note, *place, foot + DISTANCE, 1.0));
         }
-        foot + DISTANCE + ROW
+        let rows = if places.iter().any(|place| place.far) {
+            ROW + ROW_GAP
+        } else {
+            0.0
+        };
+        foot + DISTANCE + ROW + rows
     }
 
     /// The pressure of that name, if it is known and wanted.
@@ -209,15 +262,26 @@ fn edge_text(shape: &LandShape, units: UnitSystem) -> String {
     }
 }
 
-/// Name and detail with a leader from the edge at `leader_y` to the target.
-fn drawn(note: &Note, top: (f64, f64), leader_y: f64) -> Part {
+/// Name and detail with a leader to the target. `edge` is the edge of the nearer row that faces the
+/// section; `outward` is 1 if the rows go down from there, -1 if up.
+fn drawn(note: &Note, place: Place, edge: f64, outward: f64) -> Part {
     let mut pen = PartPen::new(note.id, note.name);
-    let first = TextSize::Label.px() * 0.8;
-    let at = (top.0, top.1 + first);
+    let shift = if place.far { ROW + ROW_GAP } else { 0.0 };
+    let own_edge = edge + outward * shift;
+    let top = if outward > 0.0 {
+        own_edge
+    } else {
+        own_edge - ROW
+    };
+    let at = (place.middle, top + TextSize::Label.px() * 0.8);
     pen.label(at, &note.detail, Anchor::Middle);
-    let outward = if leader_y > note.target.1 { -4.0 } else { 4.0 };
-    let start = (top.0, leader_y + outward);
-    pen.line(&[start, note.target], Stroke::plain(Line::Fine));
+    let from = |edge: f64| (place.leader, edge - outward * 4.0);
+    let mut leader = vec![from(own_edge)];
+    if place.far {
+        leader.push(from(edge));
+    }
+    leader.push(note.target);
+    pen.line(&leader, Stroke::plain(Line::Fine));
     pen.push(Prim::Circle {
         centre: note.target.into(),
         radius: 2.0,

@@ -8,9 +8,6 @@ use super::hatch::hatched;
 use super::proportions::{Proportions, Span};
 use crate::scene::{Line, Stroke};
 
-/// Length of the section on the sheet, px.
-const LENGTH: f64 = 800.0;
-
 /// Thickness of the end walls as a share of the spool diameter.
 const END_WALL: f64 = 0.3;
 
@@ -28,6 +25,8 @@ pub(super) struct Sheet<'a> {
     pub(super) travel: f64,
     pub(super) moment: Option<&'a Moment>,
     pub(super) scale: PressureScale,
+    /// Length of the housing on the sheet, px.
+    pub(super) length: f64,
     /// Sheet length of a millimetre, px.
     pub(super) px_per_mm: f64,
     /// Left edge of the housing, mm.
@@ -43,7 +42,7 @@ impl<'a> Sheet<'a> {
         shape: Proportions,
         travel: f64,
         moment: Option<&'a Moment>,
-        scale: PressureScale,
+        (scale, length): (PressureScale, f64),
     ) -> Self {
         let wall = 2.0 * END_WALL * shape.radius;
         let (left, right) = (shape.head_end - wall, shape.spring_end + wall);
@@ -52,7 +51,8 @@ impl<'a> Sheet<'a> {
             travel,
             moment,
             scale,
-            px_per_mm: LENGTH / (right - left),
+            length,
+            px_per_mm: length / (right - left),
             left,
             right,
             half_height: shape.core_radius + 2.0 * OUTER_WALL * shape.radius,

@@ -29,7 +29,7 @@ fn spool_left(scene: &Scene) -> f64 {
 fn sheet(circuit: &Circuit, travel: f64) -> Sheet<'static> {
     let scale = PressureScale { most: 200e5 };
     let shape = Proportions::of(&circuit.parts().valve);
-    Sheet::new(shape, travel, None, scale)
+    Sheet::new(shape, travel, None, (scale, 800.0))
 }
 
 #[test]
@@ -257,16 +257,39 @@ fn no_text_touches_a_line_or_a_text() {
                 helmsplit_scenario::UnitSystem::Us,
                 helmsplit_scenario::UnitSystem::Si,
             ] {
-                let options = DrawingOptions {
-                    units,
-                    values: true,
-                };
-                let scene = valve_scene(&solved.circuit, moment.as_ref(), Some(travel), options);
-                let wrong = collisions(&scene);
-                assert!(wrong.is_empty(), "{} at {share}: {wrong:#?}", preset.key);
+                for section_length in [800.0, 640.0, 480.0, 400.0] {
+                    let options = DrawingOptions {
+                        units,
+                        section_length,
+                        ..DrawingOptions::default()
+                    };
+                    let moment = moment.as_ref();
+                    let scene = valve_scene(&solved.circuit, moment, Some(travel), options);
+                    let wrong = collisions(&scene);
+                    let at = format!("{} at {share}, {section_length} px", preset.key);
+                    assert!(wrong.is_empty(), "{at}, {units:?}: {wrong:#?}");
+                }
             }
         }
     }
+}
+
+#[test]
+fn a_bare_section_has_bodies_alone() {
+    let circuit = circuit("orchard_carrier");
+    let options = DrawingOptions {
+        section_length: 300.0,
+        notes: false,
+        ..DrawingOptions::default()
+    };
+    let scene = valve_scene(&circuit, None, Some(0.002), options);
+    assert!(scene.part("valve.spool").is_some(), "the spool");
+    let prims = scene.parts.iter().flat_map(|part| &part.prims);
+    let texts = prims
+        .filter(|prim| matches!(prim, Prim::Text { .. }))
+        .count();
+    assert_eq!(texts, 0, "no texts");
+    assert!(scene.bounds.width() < 340.0, "{:?}", scene.bounds);
 }
 
 #[test]

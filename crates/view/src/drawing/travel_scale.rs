@@ -11,11 +11,11 @@ use crate::style::TextSize;
 use crate::svg::label_width;
 use helmsplit_model::Quantity;
 
-/// Length of the scale, px.
-const LENGTH: f64 = 460.0;
+/// Length of the scale as a share of that of the section.
+const LENGTH: f64 = 0.575;
 
-/// Marks on a scale, at most.
-const TICKS: f64 = 9.0;
+/// Least distance of the marks on a scale, px.
+const TICK_SPACING: f64 = 51.0;
 
 impl Sheet<'_> {
     /// The scale; `at` is its zero on the axis, px.
@@ -23,7 +23,8 @@ impl Sheet<'_> {
         let s = &self.shape;
         let mut pen = PartPen::new("valve.travel", "Spool travel");
         let (x0, y) = at;
-        let place = |travel: f64| x0 + LENGTH * (travel / s.stroke).clamp(0.0, 1.0);
+        let length = LENGTH * self.length;
+        let place = |travel: f64| x0 + length * (travel / s.stroke).clamp(0.0, 1.0);
         pen.text(
             (x0 - 18.0, y + 4.0),
             "Spool travel",
@@ -46,14 +47,19 @@ impl Sheet<'_> {
                     millimetres(from, options.units)
                 )
             };
+            let text = if label_width(&text, TextSize::Small) > 0.8 * length {
+                "priority holes throttle".to_owned()
+            } else {
+                text
+            };
             let opening = place(s.overlap);
-            let (x, anchor) = beside(&text, (left, right), opening, (x0, x0 + LENGTH));
+            let (x, anchor) = beside(&text, (left, right), opening, (x0, x0 + length));
             let small = (TextSize::Small, Tone::Ink);
             pen.text((x, y - 12.0), text, small, anchor);
         }
         let fine = Stroke::plain(Line::Fine);
-        pen.line(&[(x0, y), (x0 + LENGTH, y)], fine);
-        for stop in [x0, x0 + LENGTH] {
+        pen.line(&[(x0, y), (x0 + length, y)], fine);
+        for stop in [x0, x0 + length] {
             pen.line(
                 &[(stop, y - 8.0), (stop, y + 8.0)],
                 Stroke::plain(Line::Symbol),
@@ -72,7 +78,7 @@ impl Sheet<'_> {
             );
         }
         self.pointer(&mut pen, (place(self.travel), y), options);
-        pen.text((x0 + LENGTH + 26.0, y + 4.0), "stop", QUIET, Anchor::Start);
+        pen.text((x0 + length + 26.0, y + 4.0), "stop", QUIET, Anchor::Start);
         pen.done()
     }
 
@@ -80,12 +86,13 @@ impl Sheet<'_> {
         let stroke = self.shape.stroke;
         let unit = options.units.unit(Quantity::Length);
         let most = unit.value_from_si(stroke / 1000.0);
-        let step = nice_step(most / TICKS);
+        let length = LENGTH * self.length;
+        let step = nice_step(most * TICK_SPACING / length);
         let places = usize::try_from((-step.log10().floor()) as i64).unwrap_or(0);
         let count = (most / step + 1e-9).floor() as u32;
         for tick in 0..=count {
             let value = step * f64::from(tick);
-            let x = x0 + LENGTH * value / most;
+            let x = x0 + length * value / most;
             pen.line(&[(x, y), (x, y + 5.0)], Stroke::plain(Line::Fine));
             pen.text(
                 (x, y + 18.0),
@@ -95,7 +102,7 @@ impl Sheet<'_> {
             );
         }
         let symbol = crate::unit_text::unit_text(unit);
-        pen.text((x0 + LENGTH + 26.0, y + 18.0), symbol, QUIET, Anchor::Start);
+        pen.text((x0 + length + 26.0, y + 18.0), symbol, QUIET, Anchor::Start);
     }
 
     /// Where the spool stands.
@@ -105,6 +112,7 @@ impl Sheet<'_> {
             direction: Vec2::new(0.0, -1.0),
             length: 9.0,
             paint: Paint::Accent,
+            pace: 0.0,
         });
         let text = value_text(self.travel / 1000.0, Quantity::Length, options.units);
         let below = (at.0, at.1 + 44.0);

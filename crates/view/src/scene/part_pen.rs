@@ -118,6 +118,7 @@ impl PartPen {
             direction,
             length,
             paint: Paint::Ink,
+            pace: 0.0,
         });
     }
 

@@ -51,6 +51,9 @@ pub enum Prim {
         length: f64,
         /// Its filling; it has a thin outline in ink.
         paint: Paint,
+        /// How fast what it shows moves, as a share of a large flow (0 to 1); 0 for arrows that
+        /// belong to a symbol.
+        pace: f64,
     },
 }
 

@@ -153,7 +153,7 @@ fn drawn(
     let Some(share) = stroke.oil else {
         return element(xml, name, place, (Some((pen, stroke.line)), fill));
     };
-    let casing = (theme.text.ink, theme.oil_width(stroke.line) + CASING);
+    let casing = (theme.text.ink, theme.casing_width(stroke.line));
     let core = (theme.pressure.at(share), theme.oil_width(stroke.line));
     // Behind dashes the casing is whole, so that colour and ground both have an edge.
     element(xml, name, place, (Some((casing, Line::Working)), fill));
@@ -163,9 +163,6 @@ fn drawn(
     }
     element(xml, name, place, (Some((core, stroke.line)), None));
 }
-
-/// What a casing adds to the width of a line, px.
-const CASING: f64 = 1.6;
 
 type Pen = ((Colour, f64), Line);
 
