@@ -5,7 +5,7 @@ use helmsplit_study::{Check, CheckId};
 
 use crate::action::Action;
 use crate::card::{card, parts_row};
-use crate::drawing::{DrawingState, Source, drawings};
+use crate::drawing::{Drawable, DrawingState, Source, drawings};
 use crate::evidence::evidence;
 use crate::look::SMALL;
 use crate::parts::Part;
@@ -27,7 +27,7 @@ const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
 pub(crate) struct Page<'a> {
     pub(crate) fields: FieldContext<'a>,
     /// `None` if the present circuit cannot be made and there is no run.
-    pub(crate) drawn: Option<Source<'a>>,
+    pub(crate) drawn: Option<Drawable<'a>>,
     pub(crate) selected: Part,
     /// The check whose evidence is open.
     pub(crate) evidence: Option<CheckId>,
@@ -58,19 +58,7 @@ pub(crate) fn response_page(
         .default_size((DRAWING_SHARE * ui.available_width()).clamp(DRAWING_WIDTH, widest))
         .size_range(DRAWING_WIDTH..=widest)
         .show(ui, |ui| {
-            let whole = page
-                .shown
-                .as_ref()
-                .and_then(|shown| shown.figure.time_range());
-            match &page.drawn {
-                Some(source) => drawings(ui, source, drawing, (view, whole), actions),
-                None => {
-                    ui.weak("The circuit cannot be drawn: see what its cards say.");
-                }
-            }
-            parts_row(ui, page.selected, &drawing.undrawn(), &page.fields, actions);
-            ui.separator();
-            card(ui, page.selected, &page.fields, states, actions);
+            left_pane(ui, page, states, (view, drawing), actions);
         });
     let open = page
         .evidence
@@ -101,6 +89,39 @@ pub(crate) fn response_page(
             None => {}
         }
     });
+}
+
+/// The drawing, the row of parts, the card.
+fn left_pane(
+    ui: &mut Ui,
+    page: &Page<'_>,
+    states: &mut FieldStates,
+    (view, drawing): (&mut TraceView, &mut DrawingState),
+    actions: &mut Vec<Action>,
+) {
+    let whole = page
+        .shown
+        .as_ref()
+        .and_then(|shown| shown.figure.time_range());
+    match page.drawn {
+        Some(of) => {
+            let source = Source {
+                of,
+                units: page.fields.units,
+                look: page.fields.look,
+                pale: page.trouble.is_some(),
+                selected: page.selected,
+                findings: page.fields.findings,
+            };
+            drawings(ui, &source, drawing, (view, whole), actions);
+        }
+        None => {
+            ui.weak("The circuit cannot be drawn: see what its cards say.");
+        }
+    }
+    parts_row(ui, page.selected, &drawing.undrawn(), &page.fields, actions);
+    ui.separator();
+    card(ui, page.selected, &page.fields, states, actions);
 }
 
 /// What the page answers, and zoom.

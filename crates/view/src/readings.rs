@@ -126,11 +126,11 @@ fn in_circuit(id: &str) -> &'static [From] {
             Q(Signal::LinePressureDrop),
         ],
         "return_line" => &[P("p_ret"), Q(Signal::ReturnFlow)],
-        _ => in_consumers(id),
+        _ => in_steering(id),
     }
 }
 
-fn in_consumers(id: &str) -> &'static [From] {
+fn in_steering(id: &str) -> &'static [From] {
     match id {
         "steering.bench" => &[
             P("p_su"),
@@ -163,6 +163,12 @@ fn in_consumers(id: &str) -> &'static [From] {
             Q(Signal::PriorityMotorFlow),
             Q(Signal::PriorityCommand),
         ],
+        _ => in_excess(id),
+    }
+}
+
+fn in_excess(id: &str) -> &'static [From] {
+    match id {
         "excess_port" => &[P("p_e"), Q(Signal::ExcessFlow), Q(Signal::ExcessOutFlow)],
         "excess_relief" => &[
             P("p_e"),
@@ -202,8 +208,8 @@ fn in_consumers(id: &str) -> &'static [From] {
 fn in_section(id: &str) -> &'static [From] {
     match id {
         "inlet" => &[P("p_in"), Q(Signal::PumpFlow)],
-        "excess_port" => &[P("p_e"), Q(Signal::ExcessFlow)],
-        "priority_port" => &[P("p_c"), Q(Signal::PriorityFlow)],
+        "excess" | "excess_port" => &[P("p_e"), Q(Signal::ExcessFlow)],
+        "priority" | "priority_port" => &[P("p_c"), Q(Signal::PriorityFlow)],
         "head_end" => &[P("p_h"), Q(Signal::HeadHoleFlow), Q(Signal::HeadEndLeakage)],
         "spring_end" => &[
             P("p_s"),

@@ -16,7 +16,7 @@ use helmsplit_view::plot::Figure;
 use crate::action::Action;
 use crate::dialogs::{Dialog, dialog};
 use crate::document::Document;
-use crate::drawing::{DrawingState, Source};
+use crate::drawing::{Drawable, DrawingState};
 use crate::error::AppError;
 use crate::look::Look;
 use crate::menu;
@@ -288,22 +288,9 @@ impl HelmsplitApp {
             status_line(ui, &status, actions);
         });
         self.make_draft();
-        let draft = self.draft.as_ref();
-        let draft = draft.and_then(|(revision, circuit)| Some((*revision, circuit.as_ref()?)));
         let solved = answer.as_ref().map(|answer| &answer.solved);
-        let drawn = solved.map_or(draft, |solved| Some((self.generation, &solved.circuit)));
-        let source = drawn.map(|(generation, circuit)| Source {
-            circuit,
-            trace: solved.map(|solved| &solved.run.trace),
-            generation,
-            units: self.settings.units,
-            look: &self.look,
-            pale: stale,
-            selected: self.selected,
-            findings: self.document.findings(),
-        });
         let page = Page {
-            drawn: source,
+            drawn: Drawable::new(self.generation, solved, self.draft.as_ref()),
             fields: FieldContext {
                 scenario: self.document.scenario(),
                 findings: self.document.findings(),

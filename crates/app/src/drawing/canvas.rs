@@ -59,12 +59,6 @@ const AROUND_BARE: f64 = 36.0;
 /// The section is drawn no shorter and no longer, px.
 const SECTION: std::ops::RangeInclusive<f64> = 320.0..=1400.0;
 
-/// Pointing reaches so far, points.
-const REACH: f32 = 7.0;
-
-/// A part that covers more of the drawing than this is hit on its lines only.
-const LARGE_PART: f64 = 0.12;
-
 /// What a scene depends on.
 #[derive(Debug, Clone, PartialEq)]
 struct SceneKey {
@@ -385,7 +379,7 @@ fn readings_text(drawn: &Drawn<'_>, id: &str) -> String {
 /// The part under the pointer, as its index.
 fn pointed_at(scene: &Scene, response: &Response, sheet: &Sheet) -> Option<usize> {
     let at = response.hover_pos()?;
-    sheet.hit(scene, at, REACH, LARGE_PART)
+    sheet.hit(scene, at)
 }
 
 /// The section, as long as fits with letters at their own size.

@@ -160,28 +160,7 @@ impl Pen<'_> {
                 radius,
                 stroke,
                 fill: paint,
-            } => {
-                let circle = kurbo::Circle::new(*centre, *radius);
-                let outline = kurbo::Shape::to_path(&circle, CURVE / f64::from(self.place.scale));
-                let stretches = self.flattened(&outline);
-                let colour = paint.map_or(Color32::TRANSPARENT, |paint| self.ink.paint(paint));
-                let at = self.place.on_screen(*centre);
-                let radius = *radius as f32 * self.place.scale;
-                let pen = stroke.map_or(Stroke::NONE, |stroke| self.plain(stroke.line));
-                // Dots stay dots in a small drawing.
-                let radius = if stroke.is_none() {
-                    radius.max(1.8)
-                } else {
-                    radius
-                };
-                self.add(Shape::Circle(egui::epaint::CircleShape {
-                    center: at,
-                    radius,
-                    fill: colour,
-                    stroke: pen,
-                }));
-                self.note_pieces(part, &stretches);
-            }
+            } => self.circle(part, (*centre, *radius), *stroke, *paint),
             Prim::Text {
                 at,
                 content,
@@ -198,6 +177,31 @@ impl Pen<'_> {
             }),
             Prim::Arrow { .. } => self.arrow(part, prim),
         }
+    }
+
+    fn circle(
+        &mut self,
+        part: usize,
+        (centre, radius): (kurbo::Point, f64),
+        stroke: Option<SceneStroke>,
+        paint: Option<Paint>,
+    ) {
+        let circle = kurbo::Circle::new(centre, radius);
+        let outline = kurbo::Shape::to_path(&circle, CURVE / f64::from(self.place.scale));
+        let stretches = self.flattened(&outline);
+        self.note_pieces(part, &stretches);
+        let radius = radius as f32 * self.place.scale;
+        self.add(Shape::Circle(egui::epaint::CircleShape {
+            center: self.place.on_screen(centre),
+            // Dots stay dots in a small drawing.
+            radius: if stroke.is_none() {
+                radius.max(1.8)
+            } else {
+                radius
+            },
+            fill: paint.map_or(Color32::TRANSPARENT, |paint| self.ink.paint(paint)),
+            stroke: stroke.map_or(Stroke::NONE, |stroke| self.plain(stroke.line)),
+        }));
     }
 
     fn arrow(&mut self, part: usize, prim: &Prim) {

@@ -22,6 +22,7 @@ use egui::{Panel, RichText, Ui, vec2};
 use helmsplit_model::Circuit;
 use helmsplit_scenario::{Findings, UnitSystem};
 use helmsplit_sim::Trace;
+use helmsplit_study::Solved;
 use helmsplit_view::Moment;
 
 use crate::action::Action;
@@ -57,14 +58,42 @@ const SECTION_SHARE: f32 = 0.3;
 /// Between the two drawings, points.
 const GAP: f32 = 4.0;
 
+/// A circuit, and its run if there is one.
+#[derive(Clone, Copy)]
+pub(crate) struct Drawable<'a> {
+    circuit: &'a Circuit,
+    trace: Option<&'a Trace>,
+    /// Changes with the circuit and with its run.
+    generation: u64,
+}
+
+impl<'a> Drawable<'a> {
+    /// The last good run, or as long as there is none the circuit of a revision of the document.
+    pub(crate) fn new(
+        generation: u64,
+        solved: Option<&'a Solved>,
+        draft: Option<&'a (u64, Option<Circuit>)>,
+    ) -> Option<Self> {
+        let Some(solved) = solved else {
+            let (revision, circuit) = draft?;
+            return Some(Self {
+                circuit: circuit.as_ref()?,
+                trace: None,
+                // Runs count up from 1: no draft is taken for a run.
+                generation: u64::MAX - *revision,
+            });
+        };
+        Some(Self {
+            circuit: &solved.circuit,
+            trace: Some(&solved.run.trace),
+            generation,
+        })
+    }
+}
+
 /// What there is to draw, before a moment is taken from it.
 pub(crate) struct Source<'a> {
-    /// The circuit of the last good run, or the present one if there is no run yet.
-    pub(crate) circuit: &'a Circuit,
-    /// The last good run.
-    pub(crate) trace: Option<&'a Trace>,
-    /// Changes with circuit, run and units.
-    pub(crate) generation: u64,
+    pub(crate) of: Drawable<'a>,
     pub(crate) units: UnitSystem,
     pub(crate) look: &'a Look,
     /// Whether the run is not that of the present circuit.
@@ -132,9 +161,9 @@ impl DrawingState {
 
     /// The moment at the cursor.
     fn make_moment(&mut self, source: &Source<'_>, cursor: f64) {
-        let key = (source.generation, cursor.to_bits());
+        let key = (source.of.generation, cursor.to_bits());
         if self.moment.as_ref().is_none_or(|(old, _)| *old != key) {
-            let moment = source.trace.and_then(|trace| Moment::of(trace, cursor));
+            let moment = source.of.trace.and_then(|trace| Moment::of(trace, cursor));
             self.moment = moment.map(|moment| (key, moment));
         }
     }
@@ -213,7 +242,7 @@ fn toolbar(ui: &mut Ui, state: &mut DrawingState, source: &Source<'_>) {
             }
         });
     });
-    if source.trace.is_some() {
+    if source.of.trace.is_some() {
         scale::bar(ui, source);
     }
 }
@@ -229,9 +258,9 @@ fn sheets(
     if state
         .parts
         .as_ref()
-        .is_none_or(|(old, _)| *old != source.generation)
+        .is_none_or(|(old, _)| *old != source.of.generation)
     {
-        state.parts = Some((source.generation, names::drawn_parts(source.circuit)));
+        state.parts = Some((source.of.generation, names::drawn_parts(source.of.circuit)));
     }
     let DrawingState {
         choice,
@@ -242,9 +271,9 @@ fn sheets(
         ..
     } = state;
     let drawn = Drawn {
-        circuit: source.circuit,
+        circuit: source.of.circuit,
         moment: moment.as_ref().map(|(_, moment)| moment),
-        generation: source.generation,
+        generation: source.of.generation,
         units: source.units,
         look: source.look,
         pale: source.pale,

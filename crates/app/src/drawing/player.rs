@@ -33,20 +33,12 @@ const SPEEDS: [(f64, &str); 7] = [
 ];
 
 /// Whether the run is played, and how fast.
-#[derive(Debug)]
+#[derive(Debug, Default)]
 pub(crate) struct Player {
     /// When the cursor was last moved, by the clock of the window, s; `None` while it rests.
     playing_since: Option<f64>,
+    /// Place among the speeds; real time at first.
     speed: usize,
-}
-
-impl Default for Player {
-    fn default() -> Self {
-        Self {
-            playing_since: None,
-            speed: 0,
-        }
-    }
 }
 
 /// What the run is and how it is looked at.

@@ -20,7 +20,7 @@ const FIELDS: u16 = 32;
 /// Draws the scale in one row.
 pub(super) fn bar(ui: &mut Ui, source: &Source<'_>) {
     let look = source.look;
-    let scale = PressureScale::of(source.circuit.parts());
+    let scale = PressureScale::of(source.of.circuit.parts());
     let unit = source.units.unit(Quantity::Pressure);
     let most = unit.value_from_si(scale.most);
     let places = usize::from(most < 20.0);

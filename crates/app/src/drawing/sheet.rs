@@ -10,6 +10,12 @@ use super::labels::{self, Label};
 use super::names::{is_control, meant, spoken_name};
 use super::place::Place;
 
+/// Pointing reaches so far, points.
+const REACH: f32 = 7.0;
+
+/// A part that covers more of the drawing than this is meant on its lines only.
+const LARGE_PART: f64 = 0.12;
+
 /// Side of the frame of a control that stands on a line, points.
 const ON_LINE: f32 = 22.0;
 
@@ -121,18 +127,17 @@ impl Sheet {
         }
     }
 
-    /// The part that is meant by pointing at `at`, as its index. Parts that cover more than a share
-    /// of `large` of the drawing are meant on their lines only.
-    pub(super) fn hit(&self, scene: &Scene, at: Pos2, reach: f32, large: f64) -> Option<usize> {
-        hit(scene, &self.key.place, at, reach, large)
+    /// The part that is meant by pointing at `at`, as its index.
+    pub(super) fn hit(&self, scene: &Scene, at: Pos2) -> Option<usize> {
+        hit(scene, &self.key.place, at)
     }
 }
 
-fn hit(scene: &Scene, place: &Place, at: Pos2, reach: f32, large: f64) -> Option<usize> {
-    let reach = f64::from(reach / place.scale);
+fn hit(scene: &Scene, place: &Place, at: Pos2) -> Option<usize> {
+    let reach = f64::from(REACH / place.scale);
     let hit = scene.hit(place.in_scene(at), reach)?;
     let share = hit.part.bounds.area() / scene.bounds.area().max(1.0);
-    if hit.distance > reach && share > large {
+    if hit.distance > reach && share > LARGE_PART {
         return None;
     }
     let target = meant(&hit.part.id);
@@ -159,18 +164,23 @@ fn controls(scene: &Scene, subject: Subject, place: &Place) -> Vec<Control> {
 }
 
 /// The frame of a part, if pointing at its middle means this part; else a small one on one of its
-/// lines where it does, the longest first.
+/// lines where it does, the longest first, or else anywhere inside.
 fn control_frame(scene: &Scene, index: usize, place: &Place) -> Rect {
     let part = &scene.parts[index];
     let whole = place.frame(part.bounds);
-    let means_it = |at: Pos2| hit(scene, place, at, 2.0, 0.1) == Some(index);
+    let means_it = |at: Pos2| hit(scene, place, at) == Some(index);
     if means_it(whole.center()) {
         return whole;
     }
     let mut lines: Vec<(f64, Point)> = pieces(part);
     lines.sort_by(|a, b| b.0.total_cmp(&a.0));
-    let middle = lines.into_iter().map(|(_, middle)| place.on_screen(middle));
-    let found = middle.into_iter().find(|&at| means_it(at));
+    let on_lines = lines.into_iter().map(|(_, at)| place.on_screen(at));
+    let within = (1..20_u8).flat_map(|x| (1..20_u8).map(move |y| [x, y]));
+    let within = within.map(|share| {
+        let [x, y] = share.map(|share| f32::from(share) / 20.0);
+        whole.lerp_inside(Vec2::new(x, y))
+    });
+    let found = on_lines.chain(within).find(|&at| means_it(at));
     found.map_or(whole, |at| Rect::from_center_size(at, Vec2::splat(ON_LINE)))
 }
 
@@ -219,7 +229,7 @@ mod tests {
                     let frame = Rect::from_min_size(pos2(10.0, 90.0), size);
                     let place = Zoom::default().place(scene.bounds, frame);
                     for control in controls(scene, *subject, &place) {
-                        let found = hit(scene, &place, control.frame.center(), 7.0, 0.12);
+                        let found = hit(scene, &place, control.frame.center());
                         let id = found.map(|index| scene.parts[index].id.as_str());
                         let what = format!("{} of {}, {size:?}", control.part_id, preset.key);
                         assert_eq!(id, Some(control.part_id.as_str()), "{what}");
