@@ -3,7 +3,11 @@
 use helmsplit_scenario::Findings;
 use helmsplit_sim::SimError;
 
-/// Why a scenario was not solved.
+use crate::equilibrium::EquilibriumError;
+use crate::modes::ModesError;
+use crate::operating::PointError;
+
+/// Why a scenario was not solved or a study gives no result.
 #[derive(Debug, thiserror::Error)]
 pub enum StudyError {
     /// The scenario is no circuit; every finding is listed.
@@ -15,4 +19,13 @@ pub enum StudyError {
     /// The solver refused the task.
     #[error(transparent)]
     Sim(#[from] SimError),
+    /// The operating point does not fit the circuit.
+    #[error(transparent)]
+    Point(#[from] PointError),
+    /// The circuit does not come to rest.
+    #[error(transparent)]
+    Equilibrium(#[from] EquilibriumError),
+    /// The modes of an equilibrium do not come out.
+    #[error(transparent)]
+    Modes(#[from] ModesError),
 }

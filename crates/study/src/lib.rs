@@ -1,8 +1,11 @@
-//! Studies: what is asked of runs. For now the solving of a scenario, the events of a run, its
-//! figures, and the checks of those figures against limits.
+//! Studies: what is asked of runs and of the equations at rest.
 //!
-//! Start with [`solve`]: scenario in, [`Solved`] out, with the verdict table in
-//! [`Solved::checks`].
+//! - A run: [`solve`] takes a scenario and gives [`Solved`], with the verdict table in
+//!   [`Solved::checks`].
+//! - At rest: [`equilibrium`] takes a scenario and an [`OperatingPoint`] and gives the
+//!   [`Equilibrium`] there, with the balance of forces on the spool and its [`Stability`];
+//!   [`Equilibrium::modes`] says who swings; [`mode_path`] and [`border`] follow that along a
+//!   sweep.
 //!
 //! # Conventions
 //! SI throughout. A check that a single run cannot answer says so ([`Status::NeedsMap`]) and
@@ -12,9 +15,15 @@
 mod check;
 mod checks;
 mod dropout;
+mod equilibrium;
 mod error;
 mod event;
+mod frequency;
+mod kick;
 mod lock;
+mod map;
+mod modes;
+mod operating;
 mod response;
 mod solve;
 mod window;
@@ -22,9 +31,29 @@ mod window;
 pub use check::{Check, CheckId, Evidence, Limit, Measure, Operand, Status};
 pub use checks::check_run;
 pub use dropout::{Dropout, longest_dropout};
+pub use equilibrium::{
+    Equilibrium, EquilibriumError, Force, ForceKind, Loss, Reading, SeekFrom, equilibria,
+    equilibrium,
+};
 pub use error::StudyError;
 pub use event::{Event, EventKind, events};
+pub use frequency::{
+    Excitation, FrequencyResponse, LIGHT, RippleBand, RippleClearance, frequency_response,
+    ripple_bands, ripple_clearance, spread_frequencies,
+};
+pub use kick::{FrictionTest, Kick, KickOptions, KickOutcome, friction_test, kick};
 pub use lock::{LockHold, lock_holds};
+pub use map::{
+    Axis, Cell, ContourLine, Layer, MapEnd, MapNews, MapSpec, MapWatch, OperatingMap, Spot,
+    check_maps, map_checks, operating_map, with_map_checks,
+};
+pub use modes::{
+    Border, BorderKind, Mode, ModeKind, ModePath, Modes, ModesError, Part, Pathway, Share,
+    Stability, Sweep, border, borders, mode_path,
+};
+pub use operating::{
+    ExcessDuty, Frozen, LeftOut, OperatingPoint, PointError, SteeringDuty, Variable, VariableName,
+};
 pub use response::{Response, response_after};
 pub use solve::{Solved, solve};
 pub use window::{Window, windows};

@@ -5,7 +5,8 @@
 //! takes the same figure, the same [`plot::Ticks`] and the same [`plot::decimate`].
 //! [`circuit_scene`] draws a circuit with the symbols of ISO 1219-1, as a [`scene::Scene`] that
 //! [`svg_from_scene`] writes and a window can point at; a [`Moment`] shades it by pressure.
-//! [`figures`] makes figures from results; [`TextTable`] sets tables for a terminal.
+//! A [`chart::Chart`] shows anything over anything: maps with contours, paths of modes, frequency
+//! responses, balances; [`svg_from_chart`] writes it. [`figures`] makes figures from results; [`TextTable`] sets tables for a terminal.
 //!
 //! # Conventions
 //! A figure holds numbers in the units it shows; the one conversion from SI happens where a figure
@@ -15,6 +16,7 @@
 //! # Not in here
 //! Windows, raster images, files: the two front ends do that.
 
+pub mod chart;
 mod colour;
 pub mod diagram;
 pub mod drawing;
@@ -40,7 +42,7 @@ pub use error::ViewError;
 pub use moment::Moment;
 pub use ramp::{PressureScale, Ramp};
 pub use readings::{Reading, part_readings};
-pub use svg::{SvgOptions, svg_from_figure, svg_from_scene};
+pub use svg::{SvgOptions, svg_from_chart, svg_from_figure, svg_from_scene};
 pub use table::{Column, TextTable};
 pub use theme::{
     BodyColours, BuiltInTheme, FillColours, RuleColours, SeriesColours, Strokes, TextTones, Theme,

@@ -1,5 +1,8 @@
 //! Figures as self-contained SVG.
 
+mod chart;
+mod chart_field;
+mod chart_panel;
 mod describe;
 mod end_labels;
 mod layout;
@@ -19,6 +22,7 @@ use crate::plot::Figure;
 use crate::style::TextSize;
 use crate::theme::Theme;
 
+pub use chart::svg_from_chart;
 pub use scene::svg_from_scene;
 
 /// At most this wide a text will be, px, in any face of the type family.

@@ -1,14 +1,15 @@
 //! The valve on the bench, and the border of hunting.
 
-use helmsplit_model::Input;
+use helmsplit_model::{Input, Signal};
+use helmsplit_scenario::parameter::valve_edges;
 use helmsplit_sim::Start;
+use helmsplit_study::{Border, Equilibrium, Variable, border, equilibrium};
 
 use super::{EARLIER, LPM, number};
-use crate::bisection::root;
 use crate::check::Tolerance::Absolute;
 use crate::check::{Check, Subject};
-use crate::modes::{Mode, modes};
-use crate::rig::{AtRest, Rig, mean, range};
+use crate::equilibria::{bench, bench_point};
+use crate::rig::{Rig, mean, range};
 use crate::trouble::Tried;
 
 const BENCH: Subject = Subject {
@@ -30,21 +31,15 @@ const HUNTING: Subject = Subject {
     unit: "Hz",
 };
 
-/// The bench with its throttles wide open: pressure sources in all but name.
-fn wide_bench(speed: &str, steering: &str, excess: &str) -> Tried<Rig> {
-    Rig::bench(speed, steering, excess)?
-        .hold(Input::BenchArea, "300 mm2")?
-        .set("excess.outlet_area", "150 mm2")
-}
-
-/// The bench at every point of its grid, friction left out: at rest it changes nothing.
-fn grid() -> Tried<Vec<AtRest>> {
+/// The bench at every point of its grid.
+fn grid() -> Tried<Vec<Equilibrium>> {
+    let scenario = bench();
     let mut all = Vec::new();
-    for speed in ["900 rpm", "2400 rpm"] {
-        for steering in ["10 bar", "70 bar", "130 bar"] {
-            for excess in ["2 bar", "60 bar", "150 bar"] {
-                let rig = wide_bench(speed, steering, excess)?;
-                all.push(rig.set("valve.coulomb_friction", "0 N")?.rest()?);
+    for speed in [900.0, 2400.0] {
+        for steering in [10.0, 70.0, 130.0] {
+            for excess in [2.0, 60.0, 150.0] {
+                let point = bench_point(speed, steering, excess);
+                all.push(equilibrium(&scenario, &point)?);
             }
         }
     }
@@ -53,7 +48,9 @@ fn grid() -> Tried<Vec<AtRest>> {
 
 /// Least and largest priority flow at rest over the grid of the bench, L/min.
 fn bench_grid() -> Tried<(f64, f64)> {
-    let flows = grid()?.into_iter().map(|rest| rest.priority_flow() * LPM);
+    let flows = grid()?
+        .into_iter()
+        .map(|rest| rest.signal(Signal::PriorityFlow) * LPM);
     let none = (f64::INFINITY, f64::NEG_INFINITY);
     Ok(flows.fold(none, |(least, most), flow| {
         (least.min(flow), most.max(flow))
@@ -62,24 +59,19 @@ fn bench_grid() -> Tried<(f64, f64)> {
 
 /// Least damping ratio over the grid of the bench.
 fn bench_damping() -> Tried<f64> {
-    let least = |rest: &AtRest| modes(rest).first().map_or(f64::NAN, |mode| mode.damping);
+    let least = |rest: &Equilibrium| rest.stability.damping.unwrap_or(f64::NAN);
     Ok(grid()?.iter().map(least).fold(f64::INFINITY, f64::min))
 }
 
-/// Least damped mode at 2400 rpm, 130 and 2 bar with a disc hole of a diameter in mm.
-fn mode_with_disc_hole(diameter: f64) -> Tried<Mode> {
-    let rest = wide_bench("2400 rpm", "130 bar", "2 bar")?
-        .set("valve.coulomb_friction", "0 N")?
-        .set("valve.disc_hole_diameter", &format!("{diameter} mm"))?
-        .rest()?;
-    Ok(*modes(&rest).first().ok_or("no mode")?)
-}
-
-/// Disc hole at which the bench begins to hunt, mm.
-fn border() -> f64 {
-    root(0.5, 0.8, |diameter| {
-        mode_with_disc_hole(diameter).map_or(f64::NAN, |mode| mode.damping)
-    })
+/// Disc hole at which the bench begins to hunt at 2400 rpm, 130 and 2 bar.
+fn hunting_border() -> Tried<Border> {
+    Ok(border(
+        &bench(),
+        &bench_point(2400.0, 130.0, 2.0),
+        Variable::Parameter(valve_edges::DISC_HOLE_DIAMETER),
+        0.5e-3,
+        0.8e-3,
+    )?)
 }
 
 fn throttled(start: &str, end: &str) -> Tried<f64> {
@@ -167,14 +159,14 @@ pub(super) fn push(all: &mut Vec<Check>) {
         "bench, 2400 rpm, 130 and 2 bar: disc hole at the border, friction left out",
         0.656,
         Absolute(1e-3),
-        border,
+        || number(hunting_border().map(|border| border.value * 1e3)),
     ));
     all.push(HUNTING.check(
         "earlier-border-frequency",
         "the same: frequency at the border",
         59.6,
         Absolute(0.1),
-        || number(mode_with_disc_hole(border()).map(|mode| mode.frequency)),
+        || number(hunting_border().map(|border| border.frequency.unwrap_or(f64::NAN))),
     ));
     all.push(HUNTING.check(
         "earlier-hunting-frequency",
