@@ -9,6 +9,7 @@ use helmsplit_study::CheckId;
 use crate::command::{Command, Stage};
 use crate::dialogs::Dialog;
 use crate::drawing::Export;
+use crate::files::ask_path::AskPath;
 use crate::parts::Part;
 use crate::settings::Appearance;
 
@@ -27,6 +28,10 @@ pub(crate) enum Action {
     SaveAs(PathBuf),
     /// Write a drawing.
     Export(Export, PathBuf),
+    /// Ask for a path, and do what the question says with it.
+    AskPath(AskPath),
+    /// Something with files.
+    Filing(Filing),
     /// Stop the solve.
     Cancel,
     Units(UnitSystem),
@@ -44,4 +49,31 @@ pub(crate) enum Action {
     Quit,
     /// Do this although changes are not saved.
     Discarding(Box<Self>),
+}
+
+/// One wish about files.
+#[derive(Debug, Clone)]
+pub(crate) enum Filing {
+    /// Save, and if that is done, this.
+    SaveThen(Box<Action>),
+    /// A path was chosen: close the dialog and do this.
+    PathChosen(Box<Action>),
+    /// Ask with our own dialog instead of the desktop's.
+    OwnDialog,
+    /// Take what the file holds now.
+    Reload,
+    /// Stay with the circuit although the file was changed or removed.
+    KeepMine,
+    /// Write the circuit over what another program made of the file.
+    ReplaceTheirs,
+    /// Show what earlier windows did not save.
+    ShowOffers,
+    /// Take one of these.
+    Restore(usize),
+    /// Throw one of these away.
+    DiscardOffer(usize),
+    /// Take a file off the list of files used lately.
+    ForgetRecent(PathBuf),
+    /// Empty that list.
+    ForgetAllRecent,
 }

@@ -1,23 +1,27 @@
 //! Windows over the window: files by their path, unsaved changes, keys, about, problems.
 
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 
-use egui::{Context, Id, Key, Modal, RichText, ScrollArea, TextEdit, Ui};
+use egui::{Context, Id, Modal, RichText, ScrollArea, Ui};
 
 use crate::about;
-use crate::action::Action;
-use crate::drawing::Export;
+use crate::action::{Action, Filing};
+use crate::files::ask_path::{PathDialog, path_dialog};
 use crate::look::Look;
 
 /// What lies over the window.
 #[derive(Debug, Clone)]
 pub(crate) enum Dialog {
-    /// Open a file by its path.
-    Open { path: String },
-    /// Save under another path.
-    SaveAs { path: String },
-    /// Write a drawing under a path.
-    Export { export: Export, path: String },
+    /// A path is asked for.
+    AskPath(Box<PathDialog>),
+    /// The desktop asks for a path.
+    ByDesktop,
+    /// A file used lately is gone.
+    Missing { path: PathBuf },
+    /// Another program changed the file that is to be saved.
+    Theirs { path: PathBuf },
+    /// Earlier windows ended without saving.
+    Offers { offers: Vec<OfferLine> },
     /// The circuit is edited and something else would replace it.
     Unsaved { next: Box<Action> },
     /// The list of keys.
@@ -26,6 +30,20 @@ pub(crate) enum Dialog {
     About,
     /// Something did not work.
     Problem { title: String, text: String },
+}
+
+/// A circuit that an earlier window did not save.
+#[derive(Debug, Clone)]
+pub(crate) struct OfferLine {
+    /// Name of its file, else of the circuit.
+    pub(crate) title: String,
+    /// Name of the circuit.
+    pub(crate) circuit: String,
+    pub(crate) file: Option<PathBuf>,
+    /// How long ago.
+    pub(crate) kept: String,
+    /// The last change in words; may be empty.
+    pub(crate) change: String,
 }
 
 impl Dialog {
@@ -47,27 +65,15 @@ pub(crate) fn dialog(
 ) {
     let response = Modal::new(Id::unique("dialog")).show(context, |ui| {
         ui.set_width(match dialog {
-            Dialog::About | Dialog::Keys | Dialog::Problem { .. } => 620.0,
+            Dialog::About | Dialog::Keys | Dialog::Problem { .. } | Dialog::AskPath(_) => 620.0,
             _ => 480.0,
         });
         match dialog {
-            Dialog::Open { path } => {
-                ui.heading("Open a circuit");
-                let label = "Path of a .circuit.ron file";
-                ask_path(ui, path, (label, "Open"), actions, Action::Open);
-            }
-            Dialog::SaveAs { path } => {
-                ui.heading("Save the circuit as");
-                let label = "Path of the file to write";
-                ask_path(ui, path, (label, "Save"), actions, Action::SaveAs);
-            }
-            Dialog::Export { export, path } => {
-                let export = *export;
-                ui.heading(export.name());
-                let label = "Path of the SVG file to write";
-                let make = |path| Action::Export(export, path);
-                ask_path(ui, path, (label, "Write"), actions, make);
-            }
+            Dialog::AskPath(ask) => path_dialog(ui, ask, look, actions),
+            Dialog::ByDesktop => by_desktop(ui, actions),
+            Dialog::Missing { path } => missing(ui, path, actions),
+            Dialog::Theirs { path } => theirs(ui, path, actions),
+            Dialog::Offers { offers: lines } => offers(ui, lines, look, actions),
             Dialog::Unsaved { next } => unsaved(ui, next, actions),
             Dialog::Keys => about::keys(ui, look),
             Dialog::About => about::about(ui, look),
@@ -93,36 +99,88 @@ pub(crate) fn dialog(
     }
 }
 
-/// Asks for a path; `make` makes the wish of it.
-fn ask_path(
-    ui: &mut Ui,
-    path: &mut String,
-    (label, button): (&str, &str),
-    actions: &mut Vec<Action>,
-    make: impl FnOnce(PathBuf) -> Action,
-) {
-    ui.add_space(4.0);
-    let label = ui.label(label);
-    let field = Id::unique("path field");
-    let response = ui
-        .add(TextEdit::singleline(path).id(field).desired_width(460.0))
-        .labelled_by(label.id);
-    // Asked first: a field that takes the focus back has not lost it.
-    let entered = response.lost_focus() && ui.input(|input| input.key_pressed(Key::Enter));
-    if ui.memory(|memory| memory.focused().is_none()) {
-        response.request_focus();
-    }
+fn by_desktop(ui: &mut Ui, actions: &mut Vec<Action>) {
+    ui.heading("The desktop asks for the file");
+    ui.label("Answer in its window.");
     ui.add_space(8.0);
     ui.horizontal(|ui| {
-        let named = !path.trim().is_empty();
-        let pressed = ui.add_enabled(named, egui::Button::new(button)).clicked();
-        if named && (pressed || entered) {
-            actions.push(make(PathBuf::from(path.trim())));
+        if ui.button("Choose here instead").clicked() {
+            actions.push(Action::Filing(Filing::OwnDialog));
         }
         if ui.button("Cancel").clicked() {
             actions.push(Action::CloseDialog);
         }
     });
+}
+
+fn missing(ui: &mut Ui, path: &Path, actions: &mut Vec<Action>) {
+    ui.heading("The file is gone");
+    ui.label(format!("There is no file {} any more.", path.display()));
+    ui.add_space(8.0);
+    ui.horizontal(|ui| {
+        if ui.button("Take it off the list").clicked() {
+            actions.push(Action::CloseDialog);
+            actions.push(Action::Filing(Filing::ForgetRecent(path.to_owned())));
+        }
+        if ui.button("Close").clicked() {
+            actions.push(Action::CloseDialog);
+        }
+    });
+}
+
+fn theirs(ui: &mut Ui, path: &Path, actions: &mut Vec<Action>) {
+    ui.heading("Another program changed the file");
+    ui.label(format!(
+        "{} is not as it was when this circuit was read from it or saved to it.",
+        path.display()
+    ));
+    ui.add_space(8.0);
+    ui.horizontal(|ui| {
+        if ui.button("Replace it with mine").clicked() {
+            actions.push(Action::Filing(Filing::ReplaceTheirs));
+        }
+        if ui.button("Reload the file").clicked() {
+            actions.push(Action::Filing(Filing::Reload));
+        }
+        if ui.button("Cancel").clicked() {
+            actions.push(Action::CloseDialog);
+        }
+    });
+}
+
+fn offers(ui: &mut Ui, offers: &[OfferLine], look: &Look, actions: &mut Vec<Action>) {
+    ui.heading("Changes that were not saved");
+    ui.label("The program ended before these circuits were saved.");
+    ScrollArea::vertical().max_height(320.0).show(ui, |ui| {
+        for (place, offer) in offers.iter().enumerate() {
+            ui.separator();
+            ui.label(RichText::new(&offer.title).strong());
+            let quiet = |text: String| RichText::new(text).color(look.quiet());
+            let folder = match &offer.file {
+                Some(file) => file.display().to_string(),
+                None => "never saved to a file".to_owned(),
+            };
+            ui.label(quiet(format!("{}, {folder}", offer.circuit)));
+            let change = if offer.change.is_empty() {
+                String::new()
+            } else {
+                format!("; last change: {}", offer.change)
+            };
+            ui.label(quiet(format!("Kept {}{change}", offer.kept)));
+            ui.horizontal(|ui| {
+                if ui.button(format!("Restore {}", offer.title)).clicked() {
+                    actions.push(Action::Filing(Filing::Restore(place)));
+                }
+                if ui.button(format!("Discard {}", offer.title)).clicked() {
+                    actions.push(Action::Filing(Filing::DiscardOffer(place)));
+                }
+            });
+        }
+    });
+    ui.separator();
+    if ui.button("Decide later").clicked() {
+        actions.push(Action::CloseDialog);
+    }
 }
 
 fn unsaved(ui: &mut Ui, next: &Action, actions: &mut Vec<Action>) {
@@ -132,7 +190,7 @@ fn unsaved(ui: &mut Ui, next: &Action, actions: &mut Vec<Action>) {
     ui.horizontal(|ui| {
         if ui.button("Save first").clicked() {
             actions.push(Action::CloseDialog);
-            actions.push(Action::Save);
+            actions.push(Action::Filing(Filing::SaveThen(Box::new(next.clone()))));
         }
         let text = RichText::new("Discard the changes");
         if ui.button(text).clicked() {

@@ -1,12 +1,14 @@
 //! The circuit being edited: its file, whether it is saved, and the way back.
 
 use std::path::{Path, PathBuf};
+use std::sync::Arc;
 
 use helmsplit_scenario::presets::Preset;
 use helmsplit_scenario::write::save_atomically;
 use helmsplit_scenario::{FileError, Finding, Findings, Scenario};
 
 use crate::command::{Command, Stage, Target};
+use crate::files::{DiskNews, Note, Snapshot, Written, written};
 
 /// Most undo steps that are kept.
 const MOST_STEPS: usize = 500;
@@ -26,16 +28,30 @@ struct Gesture {
     before: Scenario,
 }
 
+/// What saving did to the words of the user's own in the file.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub enum Comments {
+    /// They are all there, or there was no file.
+    Kept,
+    /// Lists that changed were written anew, without the comments within them.
+    LostInLists,
+    /// The file was written anew, with our comments in place of others.
+    Replaced,
+}
+
 /// The circuit with its file and its history.
 #[derive(Debug, Clone)]
 pub struct Document {
     scenario: Scenario,
     findings: Findings,
     path: Option<PathBuf>,
-    /// What the file holds; for a new circuit, what it began as.
-    saved: Scenario,
-    /// The text of the file, as long as it was not rewritten.
-    source: Option<String>,
+    /// What the file holds; for a new circuit, what it began as. `None` if the file is not ours:
+    /// gone, or changed by somebody else.
+    saved: Option<Scenario>,
+    /// The text it was read from or written to last.
+    source: Option<Arc<str>>,
+    /// The text that we know to be in the file; `None` if the file is known to be gone.
+    disk: Option<Arc<str>>,
     undo: Vec<Step>,
     redo: Vec<Step>,
     gesture: Option<Gesture>,
@@ -49,7 +65,7 @@ impl Document {
     /// The findings of reading the preset; a test holds that each reads.
     pub fn from_preset(preset: &Preset) -> Result<Self, Findings> {
         let scenario = preset.scenario()?;
-        Ok(Self::new(scenario, None, Some(preset.text.to_owned())))
+        Ok(Self::new(scenario, None, Some(preset.text.into())))
     }
 
     /// A circuit from a file.
@@ -57,22 +73,42 @@ impl Document {
     /// # Errors
     /// Every finding that prevents its use, with line and column.
     pub fn open(path: &Path) -> Result<Self, Findings> {
-        let (scenario, findings) = Scenario::load(path);
-        match scenario {
-            Some(scenario) if !findings.has_errors() => {
-                // Read once more for its comments; a file that vanished since is written anew.
-                let source = std::fs::read_to_string(path).ok();
-                Ok(Self::new(scenario, Some(path.to_owned()), source))
-            }
-            _ => Err(findings),
-        }
+        let (scenario, source) = read(path)?;
+        // The folder we were started in may be left.
+        let path = std::path::absolute(path).unwrap_or_else(|_| path.to_owned());
+        Ok(Self::new(scenario, Some(path), Some(source)))
     }
 
-    fn new(scenario: Scenario, path: Option<PathBuf>, source: Option<String>) -> Self {
+    /// A circuit that was not saved when its window ended, as it was kept. It differs from its
+    /// file, if it has one, by one step that can be undone.
+    ///
+    /// # Errors
+    /// The findings of reading what was kept.
+    pub(crate) fn restored(note: &Note) -> Result<Self, Findings> {
+        let (scenario, findings) = Scenario::from_text(&note.title(), &note.text);
+        let scenario = scenario.ok_or(findings)?;
+        let file = note.file.as_deref();
+        let mut document = match file.map(Self::open) {
+            Some(Ok(document)) => document,
+            _ => {
+                let text = note.text.as_str().into();
+                let path = note.file.clone();
+                let mut document = Self::new(scenario.clone(), path, Some(text));
+                document.disk = None;
+                document.saved = None;
+                document
+            }
+        };
+        document.replace(scenario, "changes restored");
+        Ok(document)
+    }
+
+    fn new(scenario: Scenario, path: Option<PathBuf>, source: Option<Arc<str>>) -> Self {
         Self {
             findings: scenario.validate(),
-            saved: scenario.clone(),
+            saved: Some(scenario.clone()),
             scenario,
+            disk: source.clone().filter(|_| path.is_some()),
             path,
             source,
             undo: Vec::new(),
@@ -119,7 +155,7 @@ impl Document {
     /// Whether it differs from its file.
     #[must_use]
     pub fn is_edited(&self) -> bool {
-        self.scenario != self.saved
+        self.saved.as_ref() != Some(&self.scenario)
     }
 
     /// Counts up with each change.
@@ -218,113 +254,129 @@ impl Document {
         self.findings = self.scenario.validate();
     }
 
-    /// The text that saving writes: the text it was read from while nothing is edited, so that
-    /// comments stay; else a file with our own comments.
-    #[must_use]
-    pub fn text(&self) -> String {
-        match &self.source {
-            Some(source) if !self.is_edited() => source.clone(),
-            _ => self.scenario.to_text(true),
+    /// Another circuit in place of this one, as one step.
+    fn replace(&mut self, scenario: Scenario, name: &str) {
+        self.finish_gesture();
+        let before = std::mem::replace(&mut self.scenario, scenario);
+        if before != self.scenario {
+            self.undo.push(Step {
+                name: name.to_owned(),
+                before,
+                after: self.scenario.clone(),
+            });
+            self.redo.clear();
+            self.changed();
         }
     }
 
-    /// Saves to `path`, all or nothing, which becomes its file. Says whether the file was
-    /// rewritten, so that comments of the user's own are gone.
+    /// The text that saving writes: the text it was read from, with the values that changed in
+    /// their places, so that comments stay; else a file with our own comments.
+    #[must_use]
+    pub fn text(&self) -> String {
+        self.written().text()
+    }
+
+    fn written(&self) -> Written {
+        match &self.source {
+            Some(source) if !self.is_edited() => Written::InPlace(source.to_string()),
+            Some(source) => written(source, &self.scenario),
+            None => Written::Anew(self.scenario.to_text(true)),
+        }
+    }
+
+    /// Saves to `path`, all or nothing, which becomes its file. Says what became of comments of
+    /// the user's own.
     ///
     /// # Errors
     /// [`FileError`] if it cannot be written; the file is as it was then.
-    pub fn save_as(&mut self, path: &Path) -> Result<bool, FileError> {
+    pub fn save_as(&mut self, path: &Path) -> Result<Comments, FileError> {
         self.finish_gesture();
-        let text = self.text();
-        let rewritten = self.source.as_ref().is_some_and(|source| *source != text);
+        let written = self.written();
+        let comments = match &written {
+            Written::InPlace(_) => Comments::Kept,
+            Written::ListsAnew(_) => Comments::LostInLists,
+            // Without a text before there was nothing to lose.
+            Written::Anew(_) if self.source.is_none() => Comments::Kept,
+            Written::Anew(_) => Comments::Replaced,
+        };
+        let text: Arc<str> = written.text().into();
         save_atomically(path, &text)?;
-        self.path = Some(path.to_owned());
-        self.saved = self.scenario.clone();
+        let path = std::path::absolute(path).unwrap_or_else(|_| path.to_owned());
+        self.path = Some(path);
+        self.saved = Some(self.scenario.clone());
+        self.disk = Some(Arc::clone(&text));
         self.source = Some(text);
-        Ok(rewritten)
+        Ok(comments)
+    }
+
+    /// How its file differs from what we know of it. A file that cannot be read for now differs in
+    /// nothing.
+    #[must_use]
+    pub(crate) fn disk_news(&self) -> Option<DiskNews> {
+        let known = self.disk.as_ref()?;
+        match std::fs::read(self.path.as_deref()?) {
+            Ok(bytes) => (bytes != known.as_bytes()).then_some(DiskNews::Changed),
+            Err(error) if error.kind() == std::io::ErrorKind::NotFound => Some(DiskNews::Gone),
+            Err(_) => None,
+        }
+    }
+
+    /// Takes the circuit that its file holds now, as a step that can be undone.
+    ///
+    /// # Errors
+    /// The findings of reading the file; nothing is changed then.
+    pub(crate) fn reload(&mut self) -> Result<(), Findings> {
+        let Some(path) = self.path.clone() else {
+            return Ok(());
+        };
+        let (scenario, source) = read(&path)?;
+        self.replace(scenario, "reload of the file");
+        self.saved = Some(self.scenario.clone());
+        self.disk = Some(Arc::clone(&source));
+        self.source = Some(source);
+        Ok(())
+    }
+
+    /// Stays with this circuit although its file was changed or removed: it counts as edited until
+    /// it is saved, and what the file holds now is known.
+    pub(crate) fn keep_mine(&mut self) {
+        let text = self.path.as_deref().map(std::fs::read_to_string);
+        self.disk = text.and_then(Result::ok).map(Into::into);
+        self.saved = None;
+    }
+
+    /// Its file with the text that we know to be in it.
+    #[must_use]
+    pub(crate) fn known_file(&self) -> Option<(&Path, Arc<str>)> {
+        Some((self.path.as_deref()?, self.disk.clone()?))
+    }
+
+    /// What to keep in case it is never saved.
+    #[must_use]
+    pub(crate) fn snapshot(&self) -> Snapshot {
+        Snapshot {
+            scenario: self.scenario.clone(),
+            source: self.source.clone(),
+            file: self.path.clone(),
+            change: self.undo_name().unwrap_or_default().to_owned(),
+        }
+    }
+}
+
+/// Reads a circuit and its text.
+fn read(path: &Path) -> Result<(Scenario, Arc<str>), Findings> {
+    let (scenario, findings) = Scenario::load(path);
+    match scenario {
+        Some(scenario) if !findings.has_errors() => {
+            // Read once more for its comments. If it changed in between, the text is not that of
+            // the circuit, and saving finds that out; if it vanished, our own text stands in.
+            let text = std::fs::read_to_string(path);
+            let text = text.unwrap_or_else(|_| scenario.to_text(true));
+            Ok((scenario, text.into()))
+        }
+        _ => Err(findings),
     }
 }
 
 #[cfg(test)]
-mod tests {
-    use super::*;
-    use helmsplit_scenario::PRESETS;
-    use helmsplit_scenario::parameter::valve_edges::FIXED_ORIFICE_DIAMETER;
-
-    fn document() -> Document {
-        Document::from_preset(&PRESETS[0]).unwrap()
-    }
-
-    fn set(text: &str) -> Command {
-        Command::SetText {
-            id: FIXED_ORIFICE_DIAMETER,
-            text: text.to_owned(),
-        }
-    }
-
-    #[test]
-    fn a_gesture_is_one_named_step() {
-        let mut document = document();
-        let before = document.scenario().clone();
-        let first = before.value(FIXED_ORIFICE_DIAMETER).text();
-        for text in ["3.6 mm", "3.5 mm", "3.4 mm"] {
-            document.apply(&set(text), Stage::Ongoing).unwrap();
-        }
-        assert_eq!(document.undo_name(), None, "not finished yet");
-        document.finish_gesture();
-        let name = format!("fixed orifice diameter, {first} to 3.4 mm");
-        assert_eq!(document.undo_name(), Some(name.as_str()), "one step");
-        assert!(document.is_edited(), "it differs from its file");
-        assert!(document.undo(), "there is a step");
-        assert_eq!(*document.scenario(), before, "back at once");
-        assert!(!document.is_edited(), "as saved");
-        assert!(!document.undo(), "no more steps");
-        assert_eq!(document.redo_name(), Some(name.as_str()), "forth again");
-        assert!(document.redo(), "there is a step");
-        let now = document.scenario().value(FIXED_ORIFICE_DIAMETER).text();
-        assert_eq!(now, "3.4 mm", "made again");
-    }
-
-    #[test]
-    fn refused_values_leave_no_trace() {
-        let mut document = document();
-        let before = document.scenario().clone();
-        for text in ["3 bar", "0 mm", "fifty"] {
-            document.apply(&set(text), Stage::Finished).unwrap_err();
-        }
-        assert_eq!(*document.scenario(), before, "unchanged");
-        assert_eq!(document.undo_name(), None, "no step");
-        assert_eq!(document.revision(), 0, "no change");
-    }
-
-    #[test]
-    fn a_new_step_ends_the_way_forth() {
-        let mut document = document();
-        document.apply(&set("3.5 mm"), Stage::Finished).unwrap();
-        document.undo();
-        document.apply(&set("3.3 mm"), Stage::Finished).unwrap();
-        assert_eq!(document.redo_name(), None, "another way was taken");
-    }
-
-    #[test]
-    fn files_come_back_bit_for_bit() {
-        let folder = tempfile::tempdir().unwrap();
-        let path = folder.path().join("mine.circuit.ron");
-        let mut document = document();
-        assert!(
-            !document.save_as(&path).unwrap(),
-            "the preset as it stands, comments and all"
-        );
-        let text = std::fs::read_to_string(&path).unwrap();
-        assert_eq!(text, PRESETS[0].text, "not a byte changed");
-        document.apply(&set("0.141 in"), Stage::Finished).unwrap();
-        assert!(document.save_as(&path).unwrap(), "rewritten");
-        assert!(!document.is_edited(), "saved");
-        let again = Document::open(&path).unwrap();
-        assert_eq!(again.scenario(), document.scenario(), "every bit");
-        assert!(
-            std::fs::read_to_string(&path).unwrap().contains("0.141 in"),
-            "as typed"
-        );
-    }
-}
+mod tests;

@@ -1,5 +1,6 @@
 //! Why there is no window.
 
+use helmsplit_raster::RasterError;
 use helmsplit_scenario::Findings;
 use helmsplit_view::ViewError;
 
@@ -41,6 +42,34 @@ pub enum AppError {
         /// What the window library said.
         cause: String,
     },
+    /// OpenGL runs on the processor.
+    #[error(
+        "OpenGL runs on the processor here ({name}), so the window draws itself there instead."
+    )]
+    SoftwareGl {
+        /// What draws it.
+        name: String,
+    },
+    /// The processor cannot draw a frame.
+    #[error("The window could not be drawn: {0}")]
+    Draw(#[from] RasterError),
+    /// The display took no picture.
+    #[error(
+        "The display took no picture of the window, so use `helmsplit run` in a terminal. It said: {cause}"
+    )]
+    Screen {
+        /// What it said.
+        cause: String,
+    },
+    /// A fault of the program while its window was open.
+    #[error(
+        "The window broke down, which is a fault of this program; changes that were not saved are \
+         offered at the next start. The fault: {cause}"
+    )]
+    Broken {
+        /// The message of the fault.
+        cause: String,
+    },
     /// The system has no thread for the solver.
     #[error("The system has no thread for the solver: {0}")]
     Thread(#[from] std::io::Error),
@@ -52,4 +81,15 @@ pub enum AppError {
         /// What the window library said.
         cause: String,
     },
+}
+
+impl AppError {
+    /// Whether another way of drawing could help: the display is there, but OpenGL is not, or
+    /// nobody knows what is wrong.
+    pub(crate) fn is_about_gl(&self) -> bool {
+        matches!(
+            self,
+            Self::SoftwareGl { .. } | Self::NoOpenGl { .. } | Self::Window { .. }
+        )
+    }
 }

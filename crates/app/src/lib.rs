@@ -1,6 +1,7 @@
 //! The window of Helmsplit: edit a circuit and see it solved at once.
 //!
-//! Start with [`run`]. [`HelmsplitApp`] owns everything; the parts of the window draw and ask
+//! Start with [`run`]. [`HelmsplitApp`] owns everything and is shown by one of two windows, which
+//! it does not know: one drawn by OpenGL, one by the processor; the parts of the window draw and ask
 //! (private `Action`s), and only the app changes things: the circuit through [`Command`]s on its
 //! [`Document`], the solving through the [`Worker`].
 //!
@@ -18,6 +19,7 @@ mod document;
 mod drawing;
 mod error;
 mod evidence;
+mod files;
 mod look;
 mod menu;
 mod parts;
@@ -30,12 +32,15 @@ mod start;
 mod status;
 mod text;
 mod traces;
+mod window;
 mod worker;
 
 pub use app::HelmsplitApp;
 pub use command::{Command, Stage, Target};
-pub use document::Document;
+pub use document::{Comments, Document};
 pub use error::AppError;
+pub use files::{Home, Kept, WindowPlace};
 pub use settings::{Appearance, Settings};
-pub use start::run;
+pub use start::{Opening, run};
+pub use window::Renderer;
 pub use worker::{Answer, Failure, Job, Quality, Worker};

@@ -1,15 +1,18 @@
 //! Menu bar and shortcuts.
 
+use std::path::{Path, PathBuf};
 use std::sync::LazyLock;
 
 use egui::{Context, Key, KeyboardShortcut, MenuBar, Modifiers, RichText, Ui};
 use helmsplit_scenario::UnitSystem;
 use helmsplit_scenario::presets::{PRESETS, Preset};
 
-use crate::action::Action;
+use crate::action::{Action, Filing};
 use crate::dialogs::Dialog;
 use crate::document::Document;
 use crate::drawing::Export;
+use crate::files::RecentFile;
+use crate::files::ask_path::{AskPath, FileKind};
 use crate::look::Look;
 use crate::settings::{Appearance, SCALES, Settings, units_name};
 
@@ -53,42 +56,54 @@ pub(crate) fn shortcuts(context: &Context, document: &Document, actions: &mut Ve
 }
 
 fn open() -> Action {
-    Action::Show(Dialog::Open {
-        path: String::new(),
-    })
+    let ask = AskPath::open("Open a circuit", FileKind::CIRCUIT, Action::Open);
+    Action::AskPath(ask)
+}
+
+fn save_as(document: &Document) -> Action {
+    Action::AskPath(ask_save_as(document))
 }
 
 /// Asks for the path to save under.
-pub(crate) fn save_as(document: &Document) -> Action {
-    let path = document.path().map_or_else(
-        || {
-            let stem = document.scenario().name.to_lowercase();
-            format!("{}.circuit.ron", stem.replace(' ', "_"))
-        },
-        |path| path.display().to_string(),
+pub(crate) fn ask_save_as(document: &Document) -> AskPath {
+    let proposal = document.path().map_or_else(
+        || PathBuf::from(format!("{}.circuit.ron", file_stem(document))),
+        Path::to_owned,
     );
-    Action::Show(Dialog::SaveAs { path })
+    let title = "Save the circuit as";
+    AskPath::save(title, FileKind::CIRCUIT, proposal, Action::SaveAs)
 }
 
 /// Asks for the path to write a drawing under.
 fn write_drawing(document: &Document, export: Export) -> Action {
-    let stem = document.scenario().name.to_lowercase().replace(' ', "_");
-    let name = format!("{stem}.{}", export.suffix());
-    let folder = document.folder().unwrap_or_default();
-    let path = folder.join(name).display().to_string();
-    Action::Show(Dialog::Export { export, path })
+    let name = format!("{}.{}", file_stem(document), export.suffix());
+    let path = document.folder().unwrap_or_default().join(name);
+    let then: fn(PathBuf) -> Action = match export {
+        Export::Circuit => |path| Action::Export(Export::Circuit, path),
+        Export::Section => |path| Action::Export(Export::Section, path),
+    };
+    Action::AskPath(AskPath::save(export.name(), FileKind::SVG, path, then))
+}
+
+/// The name of the circuit as a file name without ending.
+fn file_stem(document: &Document) -> String {
+    let name = document.scenario().name.to_lowercase();
+    name.replace([' ', '/', '\\'], "_")
 }
 
 /// Draws the bar: menus, the name of the file, units.
 pub(crate) fn menu_bar(
     ui: &mut Ui,
     document: &Document,
+    (recent, offers): (&[RecentFile], usize),
     settings: &Settings,
     look: &Look,
     actions: &mut Vec<Action>,
 ) {
     MenuBar::new().ui(ui, |ui| {
-        ui.menu_button("File", |ui| file_menu(ui, document, actions));
+        ui.menu_button("File", |ui| {
+            file_menu(ui, document, (recent, offers), actions);
+        });
         ui.menu_button("Edit", |ui| edit_menu(ui, document, actions));
         ui.menu_button("View", |ui| view_menu(ui, settings, actions));
         ui.menu_button("Help", |ui| {
@@ -130,7 +145,12 @@ fn item(
     }
 }
 
-fn file_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {
+fn file_menu(
+    ui: &mut Ui,
+    document: &Document,
+    (recent, offers): (&[RecentFile], usize),
+    actions: &mut Vec<Action>,
+) {
     ui.set_min_width(200.0);
     ui.menu_button("New from preset", |ui| {
         for (preset, name) in NAMED_PRESETS.iter() {
@@ -138,6 +158,14 @@ fn file_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {
         }
     });
     item(ui, "Open...", Some(OPEN), actions, open);
+    ui.add_enabled_ui(!recent.is_empty(), |ui| {
+        ui.menu_button("Open recent", |ui| recent_menu(ui, recent, actions));
+    });
+    if offers > 0 {
+        item(ui, "Restore unsaved changes...", None, actions, || {
+            Action::Filing(Filing::ShowOffers)
+        });
+    }
     ui.separator();
     item(ui, "Save", Some(SAVE), actions, || Action::Save);
     item(ui, "Save as...", Some(SAVE_AS), actions, || {
@@ -151,6 +179,22 @@ fn file_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {
     });
     ui.separator();
     item(ui, "Quit", Some(QUIT), actions, || Action::Quit);
+}
+
+fn recent_menu(ui: &mut Ui, recent: &[RecentFile], actions: &mut Vec<Action>) {
+    for file in recent {
+        let gone = if file.missing { " (missing)" } else { "" };
+        let name = format!("{}{gone}", file.name());
+        let button = egui::Button::new(name).shortcut_text(file.folder());
+        if ui.add(button).clicked() {
+            actions.push(Action::Open(file.path.clone()));
+            ui.close();
+        }
+    }
+    ui.separator();
+    item(ui, "Empty this list", None, actions, || {
+        Action::Filing(Filing::ForgetAllRecent)
+    });
 }
 
 fn edit_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {

@@ -1,96 +1,65 @@
 //! Opens the window.
 
-use std::any::Any;
-use std::panic::{AssertUnwindSafe, catch_unwind};
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 
-use eframe::NativeOptions;
-use egui::ViewportBuilder;
-use helmsplit_scenario::PRESETS;
+use helmsplit_scenario::{PRESETS, Preset};
 
 use crate::app::HelmsplitApp;
 use crate::document::Document;
 use crate::error::AppError;
+use crate::files::{Home, Kept};
+use crate::window::{MakeApp, Renderer, again, cpu, gl, viewport};
 
-/// Smallest window that everything fits into, points.
-const LEAST_SIZE: [f32; 2] = [960.0, 600.0];
+/// What to open.
+#[derive(Debug, Clone, Default, PartialEq, Eq)]
+pub struct Opening {
+    /// Circuit file, or the name of a preset; `None` for the orchard carrier.
+    pub file: Option<PathBuf>,
+    /// What draws the window.
+    pub renderer: Renderer,
+}
 
-/// Opens the window on a circuit file, or on the orchard carrier, and stays until it is closed.
+/// Opens the window and stays until it is closed.
 ///
-/// It draws through OpenGL.
+/// [`Renderer::Auto`] takes OpenGL. Where that is missing, or runs on the processor itself, it
+/// starts the program again with `--renderer cpu [-- FILE]` and becomes it, so this function then
+/// does not return: a program that calls it takes these arguments.
 ///
 /// # Errors
 /// [`AppError`] if the file cannot be used or there is no window to be had; its text says what
 /// would do.
-pub fn run(file: Option<PathBuf>) -> Result<(), AppError> {
-    let document = match file {
-        Some(path) => Document::open(&path),
-        None => Document::from_preset(&PRESETS[0]),
+pub fn run(opening: &Opening) -> Result<(), AppError> {
+    let file = opening.file.as_deref();
+    let document = first_document(file)?;
+    let home = Home::of_user();
+    let (kept, notice) = home.as_ref().map_or_else(Default::default, |home| {
+        Kept::read_or_put_aside(&home.settings_file())
+    });
+    let viewport = viewport(kept.window);
+    let make: MakeApp =
+        Box::new(move |context| HelmsplitApp::at_home(context, document, home, kept, notice));
+    match opening.renderer {
+        Renderer::Glow => gl::run(viewport, false, make),
+        Renderer::Cpu => cpu::run(viewport, make),
+        Renderer::Auto => match gl::run(viewport, true, make) {
+            Err(error) if error.is_about_gl() => Err(again::start_on_cpu(file)),
+            outcome => outcome,
+        },
+    }
+}
+
+/// The circuit to begin with; as on the command line, a file goes before a preset of its name.
+fn first_document(file: Option<&Path>) -> Result<Document, AppError> {
+    let preset = match file {
+        None => Some(PRESETS[0]),
+        Some(file) if file.exists() => None,
+        Some(file) => file.to_str().and_then(Preset::from_key),
     };
-    let document = document.map_err(AppError::Circuit)?;
-    let options = NativeOptions {
-        viewport: ViewportBuilder::default()
-            .with_title("Helmsplit")
-            .with_app_id("helmsplit")
-            .with_inner_size([1360.0, 840.0])
-            .with_min_inner_size(LEAST_SIZE),
-        renderer: eframe::Renderer::Glow,
-        ..NativeOptions::default()
+    let document = match (preset, file) {
+        (Some(preset), _) => Document::from_preset(&preset),
+        (None, file) => Document::open(file.unwrap_or(Path::new(""))),
     };
-    let mut refused = None;
-    // A missing library of the display is a panic inside the window library.
-    let outcome = catch_unwind(AssertUnwindSafe(|| {
-        eframe::run_native(
-            "helmsplit",
-            options,
-            Box::new(|creation| match HelmsplitApp::new(creation, document) {
-                Ok(app) => Ok(Box::new(app)),
-                Err(error) => {
-                    let text = error.to_string();
-                    refused = Some(error);
-                    Err(text.into())
-                }
-            }),
-        )
-    }));
-    match (outcome, refused) {
-        (_, Some(error)) => Err(error),
-        (Ok(Ok(())), None) => Ok(()),
-        (Ok(Err(error)), None) => Err(reason(&error)),
-        (Err(panic), None) => Err(reason_of_panic(panic.as_ref())),
-    }
-}
-
-fn reason(error: &eframe::Error) -> AppError {
-    let cause = error.to_string();
-    match error {
-        eframe::Error::Glutin(_)
-        | eframe::Error::NoGlutinConfigs(..)
-        | eframe::Error::OpenGL(_) => AppError::NoOpenGl { cause },
-        _ => reason_of_text(cause),
-    }
-}
-
-fn reason_of_panic(panic: &(dyn Any + Send)) -> AppError {
-    let text = panic
-        .downcast_ref::<String>()
-        .cloned()
-        .or_else(|| panic.downcast_ref::<&str>().map(|text| (*text).to_owned()));
-    reason_of_text(text.unwrap_or_else(|| "a fault without a message".to_owned()))
-}
-
-/// Sorts what the window library says by what the user can do about it.
-fn reason_of_text(cause: String) -> AppError {
-    let says = |part: &str| cause.contains(part);
-    if says("DISPLAY") || says("open connection to X server") || says("XOpenDisplay") {
-        AppError::NoDisplay { cause }
-    } else if says("shared librar") || says("xkbcommon") || says("libX") {
-        AppError::MissingLibrary { cause }
-    } else if says("glutin") || says("OpenGL") || says("EGL") {
-        AppError::NoOpenGl { cause }
-    } else {
-        AppError::Window { cause }
-    }
+    document.map_err(AppError::Circuit)
 }
 
 #[cfg(test)]
@@ -98,30 +67,22 @@ mod tests {
     use super::*;
 
     #[test]
-    fn raw_errors_become_sentences_that_help() {
-        let cases = [
-            (
-                "neither WAYLAND_DISPLAY nor WAYLAND_SOCKET nor DISPLAY is set",
-                "no display",
-            ),
-            ("Failed to open connection to X server", "no display"),
-            (
-                "Failed to load one of xlib's shared libraries",
-                "libxkbcommon-x11-0",
-            ),
-            ("Found no glutin configs", "libegl1"),
-            ("something else", "something else"),
-        ];
-        for (raw, helpful) in cases {
-            let text = reason_of_text(raw.to_owned()).to_string();
-            assert!(text.contains(helpful), "{raw}: {text}");
-            assert!(text.contains("helmsplit run"), "{raw}: {text}");
-        }
+    fn a_file_that_is_none_is_refused_before_any_window() {
+        let opening = Opening {
+            file: Some(PathBuf::from("nowhere.circuit.ron")),
+            renderer: Renderer::Auto,
+        };
+        let error = run(&opening).unwrap_err();
+        assert!(error.to_string().contains("nowhere.circuit.ron"), "{error}");
     }
 
     #[test]
-    fn a_file_that_is_none_is_refused_before_any_window() {
-        let error = run(Some(PathBuf::from("nowhere.circuit.ron"))).unwrap_err();
-        assert!(error.to_string().contains("nowhere.circuit.ron"), "{error}");
+    fn presets_open_by_name() {
+        let name = |file: Option<&str>| {
+            let document = first_document(file.map(Path::new)).unwrap();
+            document.scenario().name.clone()
+        };
+        assert_eq!(name(None), "Orchard carrier", "the demo");
+        assert_eq!(name(Some("frost-pruner")), "Frost pruner", "by its name");
     }
 }

@@ -1,11 +1,15 @@
 //! The arguments.
 
+use std::ffi::OsString;
 use std::path::PathBuf;
 
-use clap::{Args, Parser, Subcommand, ValueEnum};
+use clap::{Args, CommandFactory, FromArgMatches, Parser, Subcommand, ValueEnum};
+use helmsplit_scenario::PRESETS;
 use helmsplit_scenario::UnitSystem;
 use helmsplit_sim::Rows;
 use helmsplit_view::BuiltInTheme;
+
+use crate::window::Renderer;
 
 const CAUTIONS: &str = "\
 Steering is safety-critical. Results support, never replace, tests on the machine, the maker's
@@ -13,19 +17,55 @@ instructions, local codes and standards, and licensed or competent practice. Oil
 injects through skin: never feel for leaks. Release stored energy before opening a line.
 
 Exit status: 0 done and all checks pass, 1 a check fails, 2 bad input, 3 the solver gave up,
-130 cancelled.";
+4 no window could be opened, 130 cancelled.";
 
-/// Simulates steering circuits with a priority flow control valve.
-///
-/// Without a command it solves FILE, or the built-in orchard carrier, and writes traces and a
-/// figure to the folder helmsplit-out.
+const ABOUT: &str = "Simulates steering circuits with a priority flow control valve.";
+
+const WITH_WINDOW: &str = "\
+Without a command it opens the window on FILE, or on the built-in orchard carrier. The commands do
+the same work in the terminal; `helmsplit run` without FILE solves the orchard carrier and writes
+traces and a figure to the folder helmsplit-out.";
+
+const WITHOUT_WINDOW: &str = "\
+Without a command it solves FILE, or the built-in orchard carrier, and writes traces and a figure
+to the folder helmsplit-out. This program was built without the window.";
+
 #[derive(Debug, Parser)]
-#[command(name = "helmsplit", version, after_help = CAUTIONS, args_conflicts_with_subcommands = true)]
+#[command(name = "helmsplit", version, about = ABOUT, after_help = CAUTIONS, args_conflicts_with_subcommands = true)]
 pub(crate) struct Arguments {
     #[command(subcommand)]
     pub(crate) command: Option<Command>,
     /// Circuit file, or the name of a preset
     pub(crate) file: Option<PathBuf>,
+    /// What draws the window; by default what `HELMSPLIT_RENDERER` says, else auto
+    #[arg(long, value_enum, value_name = "RENDERER")]
+    pub(crate) renderer: Option<Renderer>,
+}
+
+/// The arguments that this program takes: without a window there is nothing to say about one.
+pub(crate) fn command(has_window: bool) -> clap::Command {
+    let command = Arguments::command();
+    let about = |rest: &str| format!("{ABOUT}\n\n{rest}");
+    if has_window {
+        command.long_about(about(WITH_WINDOW))
+    } else {
+        command
+            .long_about(about(WITHOUT_WINDOW))
+            .mut_arg("renderer", |argument| argument.hide(true))
+    }
+}
+
+/// Reads the arguments; the first is the name of the program.
+///
+/// # Errors
+/// What clap says of them; help and version count as errors that go to standard output.
+pub(crate) fn parse(
+    arguments: impl IntoIterator<Item = OsString>,
+    has_window: bool,
+) -> Result<Arguments, clap::Error> {
+    let mut command = command(has_window);
+    let matches = command.try_get_matches_from_mut(arguments)?;
+    Arguments::from_arg_matches(&matches).map_err(|error| error.format(&mut command))
 }
 
 #[derive(Debug, Subcommand)]
@@ -55,6 +95,7 @@ pub(crate) enum Command {
 #[derive(Debug, Args)]
 pub(crate) struct CircuitArguments {
     /// Circuit file, or the name of a preset
+    #[arg(default_value = PRESETS[0].key)]
     pub(crate) file: PathBuf,
     /// Set a value, such as `valve.fixed_orifice_diameter="3.5 mm"` or `excess.kind=tank`; may be repeated
     #[arg(long = "set", value_name = "PATH=VALUE")]

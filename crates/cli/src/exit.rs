@@ -3,6 +3,8 @@
 use helmsplit_scenario::{FileError, Finding, Findings};
 use helmsplit_study::StudyError;
 
+use crate::window::NoWindow;
+
 /// How the program ended, for the shell.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum ExitStatus {
@@ -14,6 +16,8 @@ pub enum ExitStatus {
     BadInput,
     /// The solver gave up.
     GaveUp,
+    /// No window could be opened.
+    NoWindow,
     /// The user cancelled.
     Cancelled,
 }
@@ -27,6 +31,7 @@ impl ExitStatus {
             Self::CheckFailed => 1,
             Self::BadInput => 2,
             Self::GaveUp => 3,
+            Self::NoWindow => 4,
             Self::Cancelled => 130,
         }
     }
@@ -53,6 +58,9 @@ pub(crate) enum Failure {
     /// A figure could not be drawn.
     #[error(transparent)]
     View(#[from] helmsplit_view::ViewError),
+    /// There is no window.
+    #[error("{}", .0.reason)]
+    Window(NoWindow),
     /// Anything else that the user can mend.
     #[error("{0}")]
     Input(String),
@@ -77,6 +85,7 @@ impl Failure {
             Self::Output(error) if error.kind() == std::io::ErrorKind::BrokenPipe => {
                 ExitStatus::Done
             }
+            Self::Window(refused) => refused.status,
             _ => ExitStatus::BadInput,
         }
     }

@@ -11,18 +11,24 @@ mod output;
 mod progress;
 mod report_json;
 mod verdict;
+mod window;
 
 use std::ffi::OsString;
 
-use clap::Parser;
-
 pub use exit::ExitStatus;
+pub use window::{NoWindow, OpenWindow, Renderer, WindowRequest};
 
 /// Runs the command line `arguments` (the first is the program's name) and gives the exit status.
 /// Results go to standard output, messages and progress to standard error.
+///
+/// Without a command the work goes to `open_window`; if there is none, because the program was
+/// built without the window, the circuit is solved instead.
 #[must_use]
-pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitStatus {
-    let arguments = match args::Arguments::try_parse_from(arguments) {
+pub fn run(
+    arguments: impl IntoIterator<Item = OsString>,
+    open_window: Option<OpenWindow>,
+) -> ExitStatus {
+    let arguments = match args::parse(arguments, open_window.is_some()) {
         Ok(arguments) => arguments,
         Err(error) => {
             // Help and version are printed to standard output and are no failure.
@@ -37,7 +43,7 @@ pub fn run(arguments: impl IntoIterator<Item = OsString>) -> ExitStatus {
             };
         }
     };
-    match commands::dispatch(arguments) {
+    match commands::dispatch(arguments, open_window) {
         Ok(status) => status,
         Err(failure) => {
             output::complain(&failure);

@@ -23,8 +23,13 @@ pub(crate) fn complain(failure: &Failure) {
         return;
     }
     let text = failure.to_string();
-    // Findings say "error" themselves, each with its place.
-    if matches!(failure, Failure::Findings(_) | Failure::Finding(_)) {
+    // Findings say "error" themselves, each with its place; what keeps a window
+    // shut is a sentence or findings.
+    let speaks_for_itself = matches!(
+        failure,
+        Failure::Findings(_) | Failure::Finding(_) | Failure::Window(_)
+    );
+    if speaks_for_itself {
         say(text.trim_end());
     } else {
         say(&format!("error: {}", text.trim_end()));

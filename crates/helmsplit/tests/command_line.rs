@@ -36,9 +36,21 @@ fn folder() -> tempfile::TempDir {
 const SHORT: [&str; 2] = ["--set", "manoeuvre.duration=0.5 s"];
 
 #[test]
+fn run_without_a_file_solves_the_demo_and_writes_it() {
+    let home = folder();
+    solves_the_demo(&home, &["run"]);
+}
+
+/// Without the window nothing else can be meant.
+#[cfg(not(feature = "app"))]
+#[test]
 fn without_a_command_the_demo_is_solved_and_written() {
     let home = folder();
-    let done = helmsplit(home.path(), &[]);
+    solves_the_demo(&home, &[]);
+}
+
+fn solves_the_demo(home: &tempfile::TempDir, arguments: &[&str]) {
+    let done = helmsplit(home.path(), arguments);
     assert!(matches!(done.status.code(), Some(0 | 1)), "{}", err(&done));
     let text = out(&done);
     assert!(text.contains("Orchard carrier"), "{text}");

@@ -6,7 +6,7 @@ use egui::epaint::{ClippedPrimitive, Mesh, Primitive};
 use egui::{Color32, Rect, TextureId, TexturesDelta};
 
 use crate::error::RasterError;
-use crate::picture::Picture;
+use crate::picture::{Picture, Strip};
 use crate::texture::Texture;
 use crate::triangle::{Clip, paint};
 
@@ -14,7 +14,13 @@ use crate::triangle::{Clip, paint};
 #[derive(Default)]
 pub struct Painter {
     textures: HashMap<TextureId, Texture>,
+    /// Counts up whenever texels change that something may have been painted with.
+    generation: u64,
 }
+
+/// The texture of the fonts. It only ever grows in place: a letter is added where nothing was, or
+/// the whole is handed over anew.
+const FONTS: TextureId = TextureId::Managed(0);
 
 impl Painter {
     /// A painter without textures.
@@ -38,10 +44,12 @@ impl Painter {
             for change in changes {
                 let fits = match change.pos {
                     None => {
+                        self.generation += 1;
                         self.textures.insert(id, Texture::new(&change));
                         true
                     }
                     Some(at) => {
+                        self.generation += u64::from(id != FONTS);
                         let texture = self.textures.get_mut(&id);
                         texture.is_some_and(|texture| texture.patch(at, &change))
                     }
@@ -71,6 +79,7 @@ impl Painter {
         ground: Color32,
     ) -> Result<Picture, RasterError> {
         let mut picture = Picture::new(size[0], size[1], ground);
+        let mut strip = picture.strip();
         for ClippedPrimitive {
             clip_rect,
             primitive,
@@ -78,29 +87,39 @@ impl Painter {
         {
             let clip = pixels_of(*clip_rect, scale, size);
             match primitive {
-                Primitive::Mesh(mesh) => self.paint_mesh(&mut picture, clip, mesh, scale)?,
+                Primitive::Mesh(mesh) => self.paint_mesh(&mut strip, clip, mesh, scale)?,
                 Primitive::Callback(_) => return Err(RasterError::Callback),
             }
         }
         Ok(picture)
     }
 
+    /// Counts up whenever texels change that something may have been painted with.
+    pub(crate) fn generation(&self) -> u64 {
+        self.generation
+    }
+
+    /// A texture that was handed over.
+    pub(crate) fn texture(&self, id: TextureId) -> Result<&Texture, RasterError> {
+        self.textures
+            .get(&id)
+            .ok_or_else(|| RasterError::NoTexture {
+                texture: format!("{id:?}"),
+            })
+    }
+
     fn paint_mesh(
         &self,
-        picture: &mut Picture,
+        strip: &mut Strip<'_>,
         clip: Clip,
         mesh: &Mesh,
         scale: f32,
     ) -> Result<(), RasterError> {
-        let Some(texture) = self.textures.get(&mesh.texture_id) else {
-            return Err(RasterError::NoTexture {
-                texture: format!("{:?}", mesh.texture_id),
-            });
-        };
+        let texture = self.texture(mesh.texture_id)?;
         for triangle in mesh.indices.chunks_exact(3) {
             let corner = |i: usize| &mesh.vertices[triangle[i] as usize];
             paint(
-                picture,
+                strip,
                 clip,
                 texture,
                 [corner(0), corner(1), corner(2)],
@@ -112,7 +131,7 @@ impl Painter {
 }
 
 /// The pixels of a clip rectangle, rounded as a GPU's scissor is, within the picture.
-fn pixels_of(rect: Rect, scale: f32, size: [usize; 2]) -> Clip {
+pub(crate) fn pixels_of(rect: Rect, scale: f32, size: [usize; 2]) -> Clip {
     // The casts hold at 0, which is what clipping wants.
     let place = |points: f32, end: usize| ((points * scale).round() as usize).min(end);
     let x = (place(rect.min.x, size[0]), place(rect.max.x, size[0]));

@@ -53,8 +53,43 @@ impl Picture {
         self.pixels.iter().flat_map(straight).collect()
     }
 
-    /// The pixels of row `y` from column `from` up to, not including, `to`.
+    /// The whole picture as one strip.
+    pub(crate) fn strip(&mut self) -> Strip<'_> {
+        Strip {
+            top: 0,
+            width: self.width,
+            pixels: &mut self.pixels,
+        }
+    }
+
+    /// The picture in strips of `height` rows, the last one perhaps lower.
+    pub(crate) fn strips(&mut self, height: usize) -> impl Iterator<Item = Strip<'_>> {
+        let width = self.width;
+        let strips = self.pixels.chunks_mut((width * height).max(1));
+        strips.enumerate().map(move |(index, pixels)| Strip {
+            top: index * height,
+            width,
+            pixels,
+        })
+    }
+}
+
+/// Whole rows of a picture, to be painted by one thread.
+pub(crate) struct Strip<'a> {
+    top: usize,
+    width: usize,
+    pixels: &'a mut [Color32],
+}
+
+impl Strip<'_> {
+    /// Its rows, counted from the top of the picture.
+    pub(crate) fn rows(&self) -> std::ops::Range<usize> {
+        self.top..self.top + self.pixels.len() / self.width.max(1)
+    }
+
+    /// The pixels of row `y` of the picture from column `from` up to, not including, `to`.
     pub(crate) fn span(&mut self, y: usize, from: usize, to: usize) -> &mut [Color32] {
-        &mut self.pixels[y * self.width + from..y * self.width + to]
+        let row = (y - self.top) * self.width;
+        &mut self.pixels[row + from..row + to]
     }
 }

@@ -7,7 +7,7 @@
 use egui::Color32;
 use egui::epaint::Vertex;
 
-use crate::picture::Picture;
+use crate::picture::Strip;
 use crate::texture::Texture;
 
 /// Pixels that may be painted: from the first up to, not including, the second.
@@ -37,9 +37,43 @@ impl Corner {
     }
 }
 
-/// Paints one triangle; `scale` is pixels per point.
+impl Clip {
+    /// What lies in both.
+    pub(crate) fn and(self, other: Self) -> Self {
+        Self {
+            x: (self.x.0.max(other.x.0), self.x.1.min(other.x.1)),
+            y: (self.y.0.max(other.y.0), self.y.1.min(other.y.1)),
+        }
+    }
+
+    /// Whether no pixel is in it.
+    pub(crate) fn is_empty(self) -> bool {
+        self.x.0 >= self.x.1 || self.y.0 >= self.y.1
+    }
+
+    /// The pixels that a triangle can touch.
+    pub(crate) fn around(corners: [&Vertex; 3], scale: f32) -> Self {
+        let ends = |of: fn(&Vertex) -> f32| {
+            let [a, b, c] = corners.map(|corner| of(corner) * scale);
+            // Corners that are no numbers give no pixels, as in `paint`.
+            if !(a + b + c).is_finite() {
+                return (0, 0);
+            }
+            let (least, greatest) = (a.min(b).min(c), a.max(b).max(c));
+            (first_centre(least), first_centre(greatest))
+        };
+        let x = ends(|corner| corner.pos.x);
+        Self {
+            // A crossing may be rounded to just beyond the corners.
+            x: (x.0.saturating_sub(1), x.1.saturating_add(1)),
+            y: ends(|corner| corner.pos.y),
+        }
+    }
+}
+
+/// Paints one triangle; `scale` is pixels per point. The clip lies within the strip.
 pub(crate) fn paint(
-    picture: &mut Picture,
+    strip: &mut Strip<'_>,
     clip: Clip,
     texture: &Texture,
     corners: [&Vertex; 3],
@@ -78,7 +112,7 @@ pub(crate) fn paint(
         if from >= to {
             continue;
         }
-        let span = picture.span(row, from, to);
+        let span = strip.span(row, from, to);
         if let Some(colour) = solid {
             fill(span, colour);
         } else {

@@ -10,12 +10,11 @@ use helmsplit_view::diagram::DrawingOptions;
 use helmsplit_view::figures::solved_figure;
 
 use super::HelmsplitApp;
-use crate::action::Action;
+use crate::action::{Action, Filing};
 use crate::command::{Command, Stage, Target};
 use crate::dialogs::Dialog;
 use crate::document::Document;
 use crate::drawing::{self, Export};
-use crate::menu;
 use crate::traces::TraceView;
 use crate::worker::{Failure, Quality};
 
@@ -32,9 +31,14 @@ impl HelmsplitApp {
                 self.dialog = Some(Dialog::Unsaved { next });
             }
             Action::New(_) | Action::Open(_) | Action::Quit => self.replace(context, action),
-            Action::Discarding(next) => self.replace(context, *next),
-            Action::Save => self.save(),
-            Action::SaveAs(path) => self.save_as(&path),
+            Action::Discarding(next) => match *next {
+                Action::Filing(Filing::Restore(offer)) => self.restore(offer),
+                next => self.replace(context, next),
+            },
+            Action::Save => self.save(context),
+            Action::SaveAs(path) => self.save_as(context, &path),
+            Action::AskPath(ask) => self.ask(context, ask),
+            Action::Filing(filing) => self.file(context, filing),
             Action::Export(export, path) => self.export(export, &path),
             Action::Cancel => {
                 self.worker.cancel();
@@ -54,7 +58,7 @@ impl HelmsplitApp {
             Action::Appearance(appearance) => self.settings.appearance = appearance,
             Action::Scale(scale) => self.settings.scale = scale,
             Action::Show(dialog) => self.dialog = Some(dialog),
-            Action::CloseDialog => self.dialog = None,
+            Action::CloseDialog => self.close_dialog(),
             Action::Select(part) => self.selected = part,
             Action::Evidence(id) => self.open_evidence(id),
             Action::CloseEvidence => self.evidence = None,
@@ -100,6 +104,10 @@ impl HelmsplitApp {
     }
 
     fn replace(&mut self, context: &Context, action: Action) {
+        let file = match &action {
+            Action::Open(path) => Some(path.clone()),
+            _ => None,
+        };
         let document = match action {
             Action::New(preset) => Document::from_preset(preset),
             Action::Open(path) => Document::open(&path),
@@ -112,47 +120,27 @@ impl HelmsplitApp {
         };
         match document {
             Ok(document) => {
-                self.dialog = None;
-                self.document = document;
-                self.fields.clear();
-                self.view = TraceView::default();
-                self.drawing.stop();
-                self.evidence = None;
-                self.failure = None;
-                self.notice.clear();
-                self.request(Quality::Final);
+                self.take_document(document);
+                if let Some(file) = file {
+                    self.used(&file);
+                }
             }
-            Err(findings) => {
-                self.dialog = Some(Dialog::problem("The circuit was not opened", findings));
-            }
+            Err(findings) => self.not_opened(&file.unwrap_or_default(), findings),
         }
     }
 
-    fn save(&mut self) {
-        match self.document.path().map(Path::to_owned) {
-            Some(path) => self.save_as(&path),
-            None => {
-                let Action::Show(dialog) = menu::save_as(&self.document) else {
-                    return;
-                };
-                self.dialog = Some(dialog);
-            }
-        }
-    }
-
-    fn save_as(&mut self, path: &Path) {
-        match self.document.save_as(path) {
-            Ok(rewritten) => {
-                self.dialog = None;
-                self.notice = if rewritten {
-                    "Saved; the file was written anew, with our comments in place of others"
-                        .to_owned()
-                } else {
-                    "Saved".to_owned()
-                };
-            }
-            Err(error) => self.dialog = Some(Dialog::problem("The circuit was not saved", error)),
-        }
+    /// Another circuit in place of this one.
+    pub(super) fn take_document(&mut self, document: Document) {
+        self.dialog = None;
+        self.document = document;
+        self.new_document();
+        self.fields.clear();
+        self.view = TraceView::default();
+        self.drawing.stop();
+        self.evidence = None;
+        self.failure = None;
+        self.notice.clear();
+        self.request(Quality::Final);
     }
 
     /// Writes a drawing at the cursor, in the colours of the window.

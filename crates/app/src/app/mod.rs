@@ -1,11 +1,12 @@
 //! The app: owns the circuit, the solver and what is in view; everything else draws and asks.
 
 mod acting;
+mod filing;
+mod safety;
 
 use std::sync::Arc;
 use std::time::Duration;
 
-use eframe::{App, CreationContext, Frame};
 use egui::{Context, Ui, ViewportCommand};
 use helmsplit_model::Circuit;
 use helmsplit_scenario::Severity;
@@ -18,6 +19,7 @@ use crate::dialogs::{Dialog, dialog};
 use crate::document::Document;
 use crate::drawing::{Drawable, DrawingState};
 use crate::error::AppError;
+use crate::files::{DiskNews, Files, Home, Kept, WindowPlace};
 use crate::look::Look;
 use crate::menu;
 use crate::parts::{PARTS, Part};
@@ -55,20 +57,21 @@ pub struct HelmsplitApp {
     dialog: Option<Dialog>,
     notice: String,
     leaving: bool,
+    context: Context,
+    files: Files,
+    /// The settings as they were kept last.
+    settings_kept: Settings,
+    /// What to do once the circuit is saved.
+    after_save: Option<Action>,
+    title: String,
+    place: WindowPlace,
+    /// What another program did to the file.
+    disk_news: Option<DiskNews>,
 }
 
 impl HelmsplitApp {
-    /// A window on a circuit. The solving begins at once.
-    ///
-    /// # Errors
-    /// [`AppError`] if a theme does not read or the system has no thread for the solver.
-    pub fn new(creation: &CreationContext<'_>, document: Document) -> Result<Self, AppError> {
-        let stored = creation.storage;
-        let settings = stored.and_then(|s| eframe::get_value(s, eframe::APP_KEY));
-        Self::with_settings(&creation.egui_ctx, document, settings.unwrap_or_default())
-    }
-
-    /// A window on a circuit, with settings.
+    /// A window on a circuit that keeps nothing: no settings, no list of files. The solving begins
+    /// at once.
     ///
     /// # Errors
     /// [`AppError`] if a theme does not read or the system has no thread for the solver.
@@ -77,10 +80,34 @@ impl HelmsplitApp {
         document: Document,
         settings: Settings,
     ) -> Result<Self, AppError> {
-        let wake = context.clone();
+        let kept = Kept {
+            settings,
+            ..Kept::default()
+        };
+        Self::at_home(context, document, None, kept, None)
+    }
+
+    /// A window on a circuit with what was kept at `home`; `notice` is shown first. The solving
+    /// begins at once.
+    ///
+    /// # Errors
+    /// [`AppError`] if a theme does not read or the system has no thread for the solver.
+    pub fn at_home(
+        context: &Context,
+        document: Document,
+        home: Option<Home>,
+        kept: Kept,
+        notice: Option<String>,
+    ) -> Result<Self, AppError> {
+        let settings = kept.settings;
+        let place = kept.window;
+        let (news, wake_for_files) = (context.clone(), context.clone());
+        let wake = move || news.request_repaint();
+        let (files, problems) = Files::new(home, kept, move || wake_for_files.request_repaint());
+        let notices: Vec<_> = notice.into_iter().chain(problems).collect();
         let mut app = Self {
             document,
-            worker: Worker::start(move || wake.request_repaint())?,
+            worker: Worker::start(wake)?,
             answer: None,
             figure: Figure::default(),
             generation: 0,
@@ -96,11 +123,23 @@ impl HelmsplitApp {
             selected: PARTS[3],
             evidence: None,
             dialog: None,
-            notice: String::new(),
+            notice: notices.join("; "),
             leaving: false,
+            context: context.clone(),
+            place,
+            files,
+            disk_news: None,
+            settings_kept: settings,
+            after_save: None,
+            title: String::new(),
         };
+        app.restore_layout(context);
         app.look.apply(context);
         app.follow_settings(context);
+        if let Some(path) = app.document.path().map(std::path::Path::to_owned) {
+            app.used(&path);
+        }
+        app.show_offers();
         app.request(Quality::Final);
         Ok(app)
     }
@@ -109,6 +148,12 @@ impl HelmsplitApp {
     #[must_use]
     pub fn document(&self) -> &Document {
         &self.document
+    }
+
+    /// The title of the window.
+    #[must_use]
+    pub fn title(&self) -> &str {
+        &self.title
     }
 
     /// The last good result.
@@ -271,8 +316,17 @@ impl HelmsplitApp {
         let end = self.document.scenario().solver().duration;
         let stale = self.failure.is_some();
         egui::Panel::top("menu").show(ui, |ui| {
-            menu::menu_bar(ui, &self.document, &self.settings, &self.look, actions);
+            let (recent, offers) = (self.files.recent(), self.files.offers().len());
+            menu::menu_bar(
+                ui,
+                &self.document,
+                (recent, offers),
+                &self.settings,
+                &self.look,
+                actions,
+            );
         });
+        self.disk_bar(ui, actions);
         egui::Panel::top("verdicts").show(ui, |ui| {
             let units = self.settings.units;
             ribbon(ui, checks, self.evidence, units, &self.look, actions);
@@ -314,15 +368,15 @@ impl HelmsplitApp {
             dialog(ui.ctx(), open, &self.look, actions);
         }
     }
-}
 
-impl App for HelmsplitApp {
-    fn ui(&mut self, ui: &mut Ui, _frame: &mut Frame) {
+    /// Shows one frame. Whoever draws the window calls this for each; `ui` is the whole of it.
+    pub fn show(&mut self, ui: &mut Ui) {
         let context = ui.ctx().clone();
         self.take_news();
         self.follow_settings(&context);
         self.guard_closing(&context);
         let mut actions = Vec::new();
+        self.follow_files(&context, &mut actions);
         if self.dialog.is_none() {
             menu::shortcuts(&context, &self.document, &mut actions);
         }
@@ -331,13 +385,11 @@ impl App for HelmsplitApp {
         for action in actions {
             self.act(&context, action);
         }
+        self.keep_settings();
+        self.follow_safety();
         self.follow_document(&context);
         if acted {
             context.request_repaint();
         }
-    }
-
-    fn save(&mut self, storage: &mut dyn eframe::Storage) {
-        eframe::set_value(storage, eframe::APP_KEY, &self.settings);
     }
 }

@@ -232,7 +232,7 @@ fn the_exported_svg_is_that_of_the_scene() {
         rig.menu("File", "Export");
         rig.click_beginning(entry);
         rig.enter(
-            "Path of the SVG file to write",
+            "Path of the file to write",
             path.to_str().expect("plain text"),
         );
         let written = std::fs::read_to_string(&path).expect("written");
@@ -254,10 +254,10 @@ fn the_exported_svg_is_that_of_the_scene() {
     rig.menu("File", "Export");
     rig.click_beginning("Circuit drawing as SVG");
     rig.enter(
-        "Path of the SVG file to write",
+        "Path of the file to write",
         nowhere.to_str().expect("plain text"),
     );
-    assert!(rig.says("was not written"), "it says so");
+    assert!(rig.says("There is no folder"), "it says so");
 }
 
 #[test]

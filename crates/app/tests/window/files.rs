@@ -102,6 +102,19 @@ fn a_file_that_cannot_be_written_says_so() {
         &mut rig,
         &folder.path().join("no such folder/x.circuit.ron"),
     );
+    assert!(rig.says("There is no folder"), "it says so");
+    assert!(
+        rig.app().document().path().is_none(),
+        "still without a file"
+    );
+}
+
+#[test]
+fn a_file_that_the_system_refuses_says_so() {
+    let folder = tempfile::tempdir().expect("a folder");
+    let mut rig = Rig::new();
+    // Longer than any name that file systems take.
+    save_as(&mut rig, &folder.path().join("x".repeat(300)));
     assert!(rig.says("was not saved"), "it says so");
     assert!(
         rig.app().document().path().is_none(),

@@ -1,9 +1,11 @@
 //! The window, driven by the names of its controls, without display and GPU.
 
+mod around_files;
 mod cpu_renderer;
 mod drawing;
 mod editing;
 mod files;
 mod looks;
+mod recovery;
 mod rig;
 mod verdicts;

@@ -6,7 +6,7 @@ use egui::accesskit::Role;
 use egui::{Key, Modifiers};
 use egui_kittest::Harness;
 use egui_kittest::kittest::Queryable;
-use helmsplit_app::{Appearance, Document, HelmsplitApp, Settings};
+use helmsplit_app::{Appearance, Document, HelmsplitApp, Home, Kept, Settings};
 use helmsplit_scenario::presets::Preset;
 use helmsplit_scenario::{ParameterId, UnitSystem};
 
@@ -38,17 +38,52 @@ impl Rig {
             units: UnitSystem::Metric,
             scale,
         };
+        Self::of(size, |context| {
+            HelmsplitApp::with_settings(context, document, settings).expect("a window")
+        })
+    }
+
+    /// A usual window on a circuit, solved.
+    pub(crate) fn on(document: Document) -> Self {
+        Self::of([1280.0, 800.0], |context| {
+            HelmsplitApp::with_settings(context, document, Settings::default()).expect("a window")
+        })
+    }
+
+    /// A usual window on a circuit, solved, that keeps its things at `home`.
+    pub(crate) fn at(home: &Home, document: Document) -> Self {
+        let home = home.clone();
+        let (kept, notice) = Kept::read_or_put_aside(&home.settings_file());
+        Self::of([1280.0, 800.0], |context| {
+            HelmsplitApp::at_home(context, document, Some(home), kept, notice).expect("a window")
+        })
+    }
+
+    fn of(size: [f32; 2], make: impl FnOnce(&egui::Context) -> HelmsplitApp) -> Self {
         let harness = Harness::builder()
             .with_size(size)
             .with_step_dt(1.0 / 60.0)
             .renderer(CpuRenderer::default())
-            .build_eframe(move |creation| {
-                HelmsplitApp::with_settings(&creation.egui_ctx, document, settings)
-                    .expect("a window")
-            });
+            .build_eframe(move |creation| make(&creation.egui_ctx));
         let mut rig = Self { harness };
         rig.solve();
         rig
+    }
+
+    /// Closes the window in order, as the system does.
+    pub(crate) fn close(mut self) {
+        self.harness.state_mut().closed();
+    }
+
+    /// Waits until something on the screen says so.
+    pub(crate) fn wait_for(&mut self, text: &str) {
+        let begun = Instant::now();
+        while !self.says(text) {
+            assert!(begun.elapsed() < PATIENCE, "nobody says {text}");
+            std::thread::sleep(Duration::from_millis(20));
+            self.harness.step();
+        }
+        self.settle();
     }
 
     pub(crate) fn app(&self) -> &HelmsplitApp {

@@ -1,21 +1,22 @@
 //! Completions for a shell, and the manual page.
 
-use clap::CommandFactory;
-
-use crate::args::Arguments;
+use crate::args::command;
 use crate::exit::{ExitStatus, Failure};
 use crate::output::print;
 
-pub(super) fn completions(shell: clap_complete::Shell) -> Result<ExitStatus, Failure> {
+pub(super) fn completions(
+    shell: clap_complete::Shell,
+    has_window: bool,
+) -> Result<ExitStatus, Failure> {
     let mut text = Vec::new();
-    clap_complete::generate(shell, &mut Arguments::command(), "helmsplit", &mut text);
+    clap_complete::generate(shell, &mut command(has_window), "helmsplit", &mut text);
     print(&String::from_utf8_lossy(&text))?;
     Ok(ExitStatus::Done)
 }
 
-pub(super) fn man() -> Result<ExitStatus, Failure> {
+pub(super) fn man(has_window: bool) -> Result<ExitStatus, Failure> {
     let mut text = Vec::new();
-    clap_mangen::Man::new(Arguments::command()).render(&mut text)?;
+    clap_mangen::Man::new(command(has_window)).render(&mut text)?;
     print(&String::from_utf8_lossy(&text))?;
     Ok(ExitStatus::Done)
 }

@@ -15,23 +15,31 @@ use helmsplit_scenario::presets::PRESETS;
 
 use crate::args::{Arguments, CircuitArguments, Colours, Command, RowChoice, RunArguments};
 use crate::exit::{ExitStatus, Failure};
+use crate::window::{OpenWindow, open};
 
 /// Does what the arguments ask.
-pub(crate) fn dispatch(arguments: Arguments) -> Result<ExitStatus, Failure> {
+pub(crate) fn dispatch(
+    arguments: Arguments,
+    open_window: Option<OpenWindow>,
+) -> Result<ExitStatus, Failure> {
+    let has_window = open_window.is_some();
     match arguments.command {
-        None => run::run(&main_job(arguments.file)),
+        None => match open_window {
+            Some(open_window) => open(open_window, arguments.file, arguments.renderer),
+            None => run::run(&main_job(arguments.file)),
+        },
         Some(Command::Run(arguments)) => run::run(&arguments),
         Some(Command::Check(arguments)) => check::check(&arguments),
         Some(Command::Draw(arguments)) => draw::draw(&arguments),
         Some(Command::New(arguments)) => new::new(&arguments),
         Some(Command::Parameters(arguments)) => parameters::parameters(&arguments),
         Some(Command::Convert(arguments)) => convert::convert(&arguments),
-        Some(Command::Completions { shell }) => completions::completions(shell),
-        Some(Command::Man) => completions::man(),
+        Some(Command::Completions { shell }) => completions::completions(shell, has_window),
+        Some(Command::Man) => completions::man(has_window),
     }
 }
 
-/// Without a command: solve the file, or the demo, with everything at its default.
+/// Without a command and without a window: solve the file, or the demo, with everything at its default.
 fn main_job(file: Option<PathBuf>) -> RunArguments {
     RunArguments {
         circuit: CircuitArguments {
