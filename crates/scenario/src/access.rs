@@ -1,7 +1,11 @@
 //! Values by their path, as the command line and scripts name them.
 
+use helmsplit_model::Input;
+
 use crate::choice::{CHOICES, ChoiceId};
 use crate::finding::Finding;
+use crate::land_table::{self, LandTable};
+use crate::manoeuvre::INPUTS;
 use crate::nearest;
 use crate::parameter::{ParameterId, parameters};
 use crate::scenario::Scenario;
@@ -13,7 +17,8 @@ const TEMPLATES: &str = "manoeuvre.templates[";
 impl Scenario {
     /// Sets a value by its path: a parameter from text with a unit (`valve.spool_diameter`,
     /// `20 mm`), a choice by its option (`excess.kind`, `tank`), a template's number
-    /// (`manoeuvre.templates[0].at`, `2 s`), `name`, `notes` or `start.state`.
+    /// (`manoeuvre.templates[0].at`, `2 s`), a list of points (`manoeuvre.wheel_rate`,
+    /// `0 s: 0 rpm, 1 s: 60 rpm`; `valve.table` likewise), `name`, `notes` or `start.state`.
     ///
     /// # Errors
     /// A finding when there is no such path (it names the nearest), or the value does not fit;
@@ -47,7 +52,11 @@ impl Scenario {
             };
             return template.set(&format!("{TEMPLATES}{place}]"), name, text);
         }
+        if let Some(input) = input_of(path) {
+            return self.manoeuvre.set_free_text(input, text);
+        }
         match path {
+            land_table::PATH => self.land_table = LandTable::from_text(text)?,
             "name" => text.clone_into(&mut self.name),
             "notes" => text.clone_into(&mut self.notes),
             STATE_PATH => self.start_state = (!text.is_empty()).then(|| text.to_owned()),
@@ -72,7 +81,11 @@ impl Scenario {
             let value = template.and_then(|template| template.value(name));
             return value.map(crate::Value::text).ok_or_else(|| unknown(path));
         }
+        if let Some(input) = input_of(path) {
+            return Ok(self.manoeuvre.free_text(input));
+        }
         match path {
+            land_table::PATH => Ok(self.land_table.text()),
             "name" => Ok(self.name.clone()),
             "notes" => Ok(self.notes.clone()),
             STATE_PATH => Ok(self.start_state.clone().unwrap_or_default()),
@@ -85,7 +98,15 @@ impl Scenario {
 pub fn paths() -> impl Iterator<Item = &'static str> {
     let choices = CHOICES.iter().map(|choice| choice.path);
     let rows = parameters().iter().map(|row| row.path);
-    choices.chain(rows).chain(["name", "notes", STATE_PATH])
+    let lists = INPUTS.iter().map(|row| row.path).chain([land_table::PATH]);
+    let texts = ["name", "notes", STATE_PATH];
+    choices.chain(rows).chain(lists).chain(texts)
+}
+
+/// The input whose breakpoints have that path.
+fn input_of(path: &str) -> Option<Input> {
+    let row = INPUTS.iter().find(|row| row.path == path)?;
+    Some(row.input)
 }
 
 /// Position and name of a template's number.
@@ -161,6 +182,44 @@ mod tests {
             .set("manoeuvre.templates[3].at", "2 s")
             .unwrap_err();
         assert!(finding.message.contains("has 1 templates"), "{finding}");
+    }
+
+    #[test]
+    fn lists_of_points_are_one_text() {
+        let mut scenario = Scenario::default();
+        let wheel = "0 s: 0 rpm, 500 ms: 0.5 rev/s, 1 s: -60 rpm";
+        scenario.set("manoeuvre.wheel_rate", wheel).unwrap();
+        assert_eq!(scenario.get("manoeuvre.wheel_rate").unwrap(), wheel, "kept");
+        let input = helmsplit_model::Input::WheelRate;
+        assert_eq!(scenario.manoeuvre.free(input).len(), 3, "three points");
+        for (text, place) in [
+            ("0 s: 0 rpm, 1 s", 1),
+            ("0 s: 0 rpm, 1 s: 6 bar", 1),
+            ("1: 2: 3", 0),
+        ] {
+            let finding = scenario.set("manoeuvre.wheel_rate", text).unwrap_err();
+            let path = format!("manoeuvre.wheel_rate[{place}]");
+            assert_eq!(finding.path, path, "{finding}");
+            assert!(!finding.hint.is_empty(), "{finding}");
+        }
+        assert_eq!(
+            scenario.get("manoeuvre.wheel_rate").unwrap(),
+            wheel,
+            "as it was"
+        );
+        scenario.set("manoeuvre.wheel_rate", "").unwrap();
+        assert!(scenario.manoeuvre.free(input).is_empty(), "all out");
+
+        scenario
+            .set("valve.table", "0 mm: 0 mm2, 2 mm: 30 mm2")
+            .unwrap();
+        let table = scenario.get("valve.table").unwrap();
+        assert_eq!(table, "0 mm: 0 mm2, 2 mm: 30 mm2", "two points");
+        let finding = scenario
+            .set("valve.table", "0 mm: 9 mm2, 1 mm: 2 mm2")
+            .unwrap_err();
+        assert_eq!(finding.path, "valve.table[1]", "{finding}");
+        assert_eq!(scenario.get("valve.table").unwrap(), table, "as it was");
     }
 
     #[test]

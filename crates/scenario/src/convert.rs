@@ -3,7 +3,7 @@
 use helmsplit_model::Quantity;
 
 use crate::UnitSystem;
-use crate::manoeuvre::InputRow;
+use crate::manoeuvre::{InputRow, TemplateParameter};
 use crate::parameter::Parameter;
 use crate::units::{Unit, unit};
 
@@ -16,6 +16,12 @@ pub fn display_unit(row: &Parameter, system: UnitSystem) -> &'static Unit {
 /// The unit in which an input is shown and written under a unit system.
 #[must_use]
 pub fn input_unit(row: &InputRow, system: UnitSystem) -> &'static Unit {
+    unit_in_system(row.quantity, row.unit(), system)
+}
+
+/// The unit in which a number of a template is shown and written under a unit system.
+#[must_use]
+pub fn template_unit(row: &TemplateParameter, system: UnitSystem) -> &'static Unit {
     unit_in_system(row.quantity, row.unit(), system)
 }
 

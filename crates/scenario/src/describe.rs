@@ -137,7 +137,8 @@ fn describe_manoeuvre(out: &mut String) {
     out.push_str(
         "\nInputs are lists of breakpoints (time, value). Between them an input runs in a straight \
          line, before the first and after the last it is held; two breakpoints at one time are a \
-         jump. An input without breakpoints stays at its level.\n\n\
+         jump. An input without breakpoints stays at its level. The command line takes such a list \
+         as one text: `--set 'manoeuvre.wheel_rate=0 s: 0 rpm, 1 s: 60 rpm'`.\n\n\
          | name | meaning | level | allowed |\n|---|---|---|---|\n",
     );
     for row in &INPUTS {
@@ -153,8 +154,8 @@ fn describe_manoeuvre(out: &mut String) {
     }
     out.push_str(
         "\n`templates` is a list of ready manoeuvres, such as `(kind: \"wheel step\", at: \"3 s\")`. \
-         In their order they append breakpoints behind what is there; each begins from the value \
-         that its input has then.\n",
+         Each writes a stretch of its input's line, from the value that the input has where it \
+         begins; breakpoints may stand ahead of it and behind it, not inside.\n",
     );
     for template in TEMPLATES {
         let _ = writeln!(out, "\n### \"{}\"\n\n{}\n", template.key, template.note);

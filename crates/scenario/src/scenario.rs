@@ -167,6 +167,17 @@ impl Scenario {
         }
     }
 
+    /// Travel and area of the land, for `valve.land` "table".
+    #[must_use]
+    pub fn land_table(&self) -> &LandTable {
+        &self.land_table
+    }
+
+    /// The same, to edit: its own edits keep it a curve.
+    pub fn land_table_mut(&mut self) -> &mut LandTable {
+        &mut self.land_table
+    }
+
     /// Whether all conditions hold under the present choices.
     #[must_use]
     pub fn meets(&self, conditions: &[Condition]) -> bool {

@@ -2,65 +2,10 @@
 
 use std::f64::consts::TAU;
 
-use super::{TemplateKind, TemplateUse, input_row};
-use crate::finding::Finding;
-
-/// The breakpoints of one input while they are put together; times in s, values in SI.
-pub(super) struct Track {
-    level: f64,
-    points: Vec<(f64, f64)>,
-}
-
-impl Track {
-    /// Free breakpoints of an input that rests at `level`.
-    pub(super) fn new(level: f64, points: Vec<(f64, f64)>) -> Self {
-        Self { level, points }
-    }
-
-    pub(super) fn into_points(self) -> Vec<(f64, f64)> {
-        self.points
-    }
-
-    /// Appends what a template writes. `place` is its position in the manoeuvre.
-    pub(super) fn append(&mut self, place: usize, template: &TemplateUse) -> Result<(), Finding> {
-        let base = self.points.last().map_or(self.level, |point| point.1);
-        let path = |field: &str| format!("manoeuvre.templates[{place}].{field}");
-        let points = breakpoints(template, base);
-        // A stretch shorter than its ramp would run backwards.
-        if points.windows(2).any(|pair| pair[1].0 < pair[0].0) {
-            let message = format!(
-                "\"{}\" has a stretch shorter than its ramp",
-                template.kind.key()
-            );
-            return Err(Finding::error(path("ramp"), message, "shorten the ramp"));
-        }
-        if let (Some(&(end, _)), Some(&(begin, _))) = (self.points.last(), points.first())
-            && begin < end
-        {
-            let label = input_row(template.kind.template().drives)
-                .label
-                .to_lowercase();
-            let message = format!(
-                "\"{}\" begins at {begin} s, but {label} already moves until {end} s",
-                template.kind.key()
-            );
-            let hint = format!("begin at {end} s or later");
-            let written = template.value("at").map(crate::value::Value::text);
-            let finding = Finding::error(path("at"), message, hint);
-            return Err(finding.with_value(&written.unwrap_or_default()));
-        }
-        for point in points {
-            // Where one template begins as another ends, both give the same point.
-            if self.points.last() != Some(&point) {
-                self.points.push(point);
-            }
-        }
-        Ok(())
-    }
-}
+use super::{TemplateKind, TemplateUse};
 
 /// Breakpoints of a template on an input that stands at `base`.
-fn breakpoints(template: &TemplateUse, base: f64) -> Vec<(f64, f64)> {
+pub(super) fn breakpoints(template: &TemplateUse, base: f64) -> Vec<(f64, f64)> {
     // The table gives each template every number asked for below; a test expands them all.
     let get = |name: &str| template.si(name).unwrap_or(f64::NAN);
     let at = get("at");

@@ -166,3 +166,12 @@ pub(super) fn time_value(path: &str, text: &str) -> Result<Value, Finding> {
     };
     Value::from_text(path, text, Quantity::Time)?.within(path, &allowed)
 }
+
+/// Reads a value of an input.
+pub(super) fn input_value(path: &str, row: &InputRow, text: &str) -> Result<Value, Finding> {
+    let allowed = Allowed {
+        range: row.allowed,
+        unit: row.unit(),
+    };
+    Value::from_text(path, text, row.quantity)?.within(path, &allowed)
+}

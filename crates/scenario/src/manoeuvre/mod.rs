@@ -1,24 +1,27 @@
 //! The manoeuvre: what is done to the circuit over time.
 //!
-//! Each input follows its free breakpoints, then what the templates append in their order. An
-//! input without any stays at its level.
+//! Each input follows its free breakpoints; a template writes a stretch of its own among them,
+//! from the value that the input has where it begins. An input without any stays at its level.
 
+mod edit;
 mod expand;
 mod inputs;
+mod line;
+mod points_text;
 mod template;
 mod template_table;
 
-use helmsplit_model::{Input, InputProfiles, Profile, ProfileError};
+use helmsplit_model::{Input, InputProfiles};
 
 use crate::UnitSystem;
 use crate::finding::{Finding, Findings};
-use crate::value::{Allowed, Value};
+use crate::value::Value;
 
 pub use inputs::{INPUTS, InputRow, input_from_name, input_row};
+pub use line::{Line, LinePoint, Origin, Span};
+pub(crate) use points_text::{pairs_from_text, pairs_text};
 pub use template::{Template, TemplateParameter, TemplateUse};
 pub use template_table::{TEMPLATES, TemplateKind};
-
-use expand::Track;
 
 /// A free breakpoint: a time and the value of the input then. Between breakpoints the input runs
 /// in a straight line; a repeated time is a jump.
@@ -43,13 +46,7 @@ impl Breakpoint {
     ) -> Result<Self, Finding> {
         Ok(Self {
             time: inputs::time_value(path, time)?,
-            value: Value::from_text(path, value, row.quantity)?.within(
-                path,
-                &Allowed {
-                    range: row.allowed,
-                    unit: row.unit(),
-                },
-            )?,
+            value: inputs::input_value(path, row, value)?,
         })
     }
 }
@@ -93,50 +90,20 @@ impl Manoeuvre {
         Ok(())
     }
 
-    /// Turns every template into free breakpoints, so that each point can be edited alone.
-    ///
-    /// # Errors
-    /// As [`Manoeuvre::profiles`]; nothing is changed then.
-    pub fn dissolve_templates(&mut self) -> Result<(), Findings> {
-        let profiles = self.profiles()?;
-        for row in &INPUTS {
-            let driven = self
-                .templates
-                .iter()
-                .any(|t| t.kind.template().drives == row.input);
-            if driven {
-                let second = inputs::second();
-                let point = |&(time, value): &(f64, f64)| Breakpoint {
-                    time: Value::from_si(time, second),
-                    value: Value::from_si(value, row.unit()),
-                };
-                let points = profiles.get(row.input).points().iter().map(point);
-                self.free[row.input as usize] = points.collect();
-            }
-        }
-        self.templates.clear();
-        Ok(())
-    }
-
     /// All inputs over time, SI.
     ///
     /// # Errors
-    /// Findings for breakpoints out of order and templates that do not fit behind what is there.
+    /// Findings for breakpoints out of order and templates that do not fit in.
     pub fn profiles(&self) -> Result<InputProfiles, Findings> {
         let mut findings = Findings::default();
-        let mut tracks: [Track; Input::ALL.len()] =
-            std::array::from_fn(|place| self.track(&INPUTS[place]));
-        for (place, template) in self.templates.iter().enumerate() {
-            let track = &mut tracks[template.kind.template().drives as usize];
-            if let Err(finding) = track.append(place, template) {
-                findings.push(finding);
-            }
-        }
         let mut profiles = InputProfiles::default();
-        for (row, track) in INPUTS.iter().zip(tracks) {
-            match profile(row, track) {
-                Ok(profile) => profiles.set(row.input, profile),
-                Err(finding) => findings.push(finding),
+        for row in &INPUTS {
+            match self.line(row) {
+                Ok(line) => match line.profile() {
+                    Ok(profile) => profiles.set(row.input, profile),
+                    Err(error) => findings.push(Finding::error(row.path, error.to_string(), "")),
+                },
+                Err(more) => findings.extend(more),
             }
         }
         if findings.is_empty() {
@@ -144,14 +111,6 @@ impl Manoeuvre {
         } else {
             Err(findings)
         }
-    }
-
-    fn track(&self, row: &InputRow) -> Track {
-        let points = self
-            .free(row.input)
-            .iter()
-            .map(|p| (p.time.si(), p.value.si()));
-        Track::new(row.level(), points.collect())
     }
 
     /// Whether anything moves the input.
@@ -175,31 +134,6 @@ impl Manoeuvre {
             template.rewrite_units(system);
         }
     }
-}
-
-/// The finished profile of an input.
-fn profile(row: &InputRow, track: Track) -> Result<Profile, Finding> {
-    let points = track.into_points();
-    if points.is_empty() {
-        return Ok(Profile::constant(row.level()));
-    }
-    let shown = |index: usize| {
-        points
-            .get(index)
-            .map_or(String::new(), |(time, _)| format!("{time} s"))
-    };
-    Profile::new(points.clone()).map_err(|error| {
-        let (index, hint) = match error {
-            ProfileError::OutOfOrder { index } => (index, "give breakpoints in the order of time"),
-            ProfileError::TripleTime { index } => {
-                (index, "a jump takes two breakpoints at one time, no more")
-            }
-            ProfileError::NotFinite { index } => (index, "give finite numbers"),
-            ProfileError::Empty => (0, "give at least one breakpoint"),
-        };
-        Finding::error(format!("{}[{index}]", row.path), error.to_string(), hint)
-            .with_value(&shown(index))
-    })
 }
 
 #[cfg(test)]

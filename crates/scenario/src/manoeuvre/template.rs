@@ -131,6 +131,11 @@ impl TemplateUse {
         Ok(())
     }
 
+    /// Puts the begin, the first number of each template.
+    pub(super) fn set_begin(&mut self, begin: Value) {
+        self.values[0] = begin;
+    }
+
     pub(crate) fn rewrite_units(&mut self, system: UnitSystem) {
         for (value, row) in self.values.iter_mut().zip(self.kind.template().parameters) {
             let unit = crate::convert::unit_in_system(row.quantity, row.unit(), system);

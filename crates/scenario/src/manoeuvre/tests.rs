@@ -1,6 +1,7 @@
 //! Tests of manoeuvres and templates.
 
 use super::*;
+use crate::value::Allowed;
 
 fn rpm(value: f64) -> f64 {
     value * std::f64::consts::PI / 30.0
