@@ -22,7 +22,7 @@ const NOT_MODELLED: &str = "Temperature changes along the circuit; wave travel i
     friction at the steering cylinder.";
 
 /// Keys and what they do.
-const KEYS: [(&str, &str); 28] = [
+const KEYS: &[(&str, &str)] = &[
     ("Ctrl+O", "Open a circuit"),
     ("Ctrl+S", "Save"),
     ("Ctrl+Shift+S", "Save as"),
@@ -66,6 +66,22 @@ const KEYS: [(&str, &str); 28] = [
     ("Plus, Minus, 0", "In the drawing: larger, smaller, all"),
     ("Ctrl+wheel", "Over the drawing: zoom around the pointer"),
     ("Drag", "In a drawing that is zoomed: move it"),
+    ("Drag a point", "On the manoeuvre: its time and value"),
+    (
+        "Ctrl, Shift",
+        "While dragging: no snapping; in time or in value alone",
+    ),
+    ("Double click", "On the manoeuvre: a new point"),
+    (
+        "Arrow keys",
+        "At a point or a template: one step, with Shift ten, with Ctrl a fine one",
+    ),
+    ("J", "At a point: a jump"),
+    (
+        "Insert, Delete",
+        "At a point: a new one behind it; take it out",
+    ),
+    ("Enter", "At a point or a template: its numbers"),
 ];
 
 /// Draws the about page.

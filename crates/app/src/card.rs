@@ -8,6 +8,7 @@ use helmsplit_scenario::choice::Choice;
 use crate::action::Action;
 use crate::command::{Command, Stage};
 use crate::look::SMALL;
+use crate::manoeuvre::lists;
 use crate::parts::{PARTS, Part};
 use crate::quantity_field::{FieldContext, FieldStates, quantity_field};
 
@@ -81,6 +82,7 @@ pub(crate) fn card(
             if rows.is_empty() {
                 ui.weak("Nothing to set under the present choice.");
             }
+            lists(ui, part, context, states, actions);
             general_remarks(ui, part, context);
         });
 }

@@ -3,6 +3,8 @@
 use helmsplit_scenario::choice::ChoiceId;
 use helmsplit_scenario::{Finding, ParameterId, Scenario};
 
+use crate::manoeuvre::{ListEdit, ListTarget};
+
 /// One change of the circuit.
 #[derive(Debug, Clone, PartialEq)]
 pub enum Command {
@@ -25,6 +27,8 @@ pub enum Command {
         /// Position of the option.
         option: u8,
     },
+    /// An edit of a list: breakpoints, templates, the table of the land.
+    List(ListEdit),
 }
 
 /// What a command changes.
@@ -34,6 +38,8 @@ pub enum Target {
     Parameter(ParameterId),
     /// A choice.
     Choice(ChoiceId),
+    /// A list or an element of it.
+    List(ListTarget),
 }
 
 /// Whether more of the same gesture is to come.
@@ -49,9 +55,10 @@ impl Command {
     /// What it changes.
     #[must_use]
     pub fn target(&self) -> Target {
-        match *self {
-            Self::SetText { id, .. } | Self::Reset { id } => Target::Parameter(id),
-            Self::Choose { id, .. } => Target::Choice(id),
+        match self {
+            Self::SetText { id, .. } | Self::Reset { id } => Target::Parameter(*id),
+            Self::Choose { id, .. } => Target::Choice(*id),
+            Self::List(edit) => Target::List(edit.target()),
         }
     }
 
@@ -67,6 +74,7 @@ impl Command {
                 Ok(())
             }
             Self::Choose { id, option } => scenario.choose(*id, *option),
+            Self::List(edit) => edit.apply(scenario),
         }
     }
 }
@@ -89,6 +97,7 @@ impl Target {
                 };
                 (choice.label, label(before), label(after))
             }
+            Self::List(target) => return target.step_name(before, after),
         };
         format!("{}, {from} to {to}", lower_first(label))
     }

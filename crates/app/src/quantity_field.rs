@@ -12,6 +12,7 @@ use helmsplit_scenario::{Findings, Parameter, ParameterId, Scenario, Severity, U
 use crate::action::Action;
 use crate::command::{Command, Stage};
 use crate::look::{Look, SMALL};
+use crate::manoeuvre::ListStates;
 use crate::text::{real_minus, unit_label, with_unit};
 
 /// Digits of a number at rest.
@@ -36,6 +37,8 @@ pub(crate) struct FieldStates {
     refused: HashMap<ParameterId, (String, String)>,
     /// The drag under way: the value it began with in the display unit, and the way so far.
     drag: Option<(ParameterId, f64, f32)>,
+    /// The editors of lists.
+    pub(crate) lists: ListStates,
 }
 
 impl FieldStates {
@@ -51,7 +54,17 @@ impl FieldStates {
 
     /// Another circuit.
     pub(crate) fn clear(&mut self) {
-        *self = Self::default();
+        let mut lists = std::mem::take(&mut self.lists);
+        lists.clear();
+        *self = Self {
+            lists,
+            ..Self::default()
+        };
+    }
+
+    /// Why the text of a parameter was refused.
+    pub(crate) fn refusal(&self, id: ParameterId) -> Option<&str> {
+        self.refused.get(&id).map(|(_, reason)| reason.as_str())
     }
 }
 

@@ -8,6 +8,7 @@ use crate::card::{card, parts_row};
 use crate::drawing::{Drawable, DrawingState, Source, drawings};
 use crate::evidence::evidence;
 use crate::look::SMALL;
+use crate::manoeuvre;
 use crate::parts::Part;
 use crate::quantity_field::{FieldContext, FieldStates};
 use crate::text::on_screen;
@@ -77,6 +78,7 @@ pub(crate) fn response_page(
         .fill(ground)
         .inner_margin(Margin::symmetric(10, 6));
     CentralPanel::default().frame(frame).show(ui, |ui| {
+        let foot = manoeuvre::reserve(ui, &states.lists);
         toolbar(ui, page, view);
         if let Some(trouble) = page.trouble {
             ui.label(RichText::new(on_screen(trouble)).color(look.error()));
@@ -88,6 +90,8 @@ pub(crate) fn response_page(
             }
             None => {}
         }
+        let whole = page.shown.as_ref().and_then(|s| s.figure.time_range());
+        manoeuvre::strip(ui, (foot, whole), &page.fields, states, view, actions);
     });
 }
 

@@ -69,6 +69,13 @@ impl HelmsplitApp {
         self.notice.clear();
         self.last_edit = context.input(|input| input.time);
         let result = self.document.apply(command, stage);
+        if let Command::List(edit) = command {
+            let lists = &mut self.fields.lists;
+            match &result {
+                Ok(()) => lists.accept(edit, self.document.scenario()),
+                Err(finding) => lists.refuse(edit, stage, finding),
+            }
+        }
         let Target::Parameter(id) = command.target() else {
             return;
         };

@@ -2,6 +2,8 @@
 
 use std::collections::BTreeSet;
 
+use helmsplit_view::plot::Axis;
+
 use super::drawn::Drawn;
 
 /// Shortest stretch of time that can be zoomed to, as a share of the run.
@@ -49,6 +51,11 @@ impl TraceView {
         } else {
             whole
         }
+    }
+
+    /// The time axis as it was drawn last, s over points.
+    pub(crate) fn time_axis(&self) -> Option<&Axis> {
+        self.drawn.as_ref().map(|drawn| &drawn.time)
     }
 
     /// Whether the whole run is in view.
