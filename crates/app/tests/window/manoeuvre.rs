@@ -2,6 +2,7 @@
 
 use egui::{Key, Modifiers, Pos2, Vec2, vec2};
 use egui_kittest::kittest::Queryable;
+use helmsplit_app::Appearance;
 use helmsplit_model::Input;
 
 use crate::rig::Rig;
@@ -307,4 +308,36 @@ fn the_strip_folds_and_comes_back() {
     rig.settle();
     assert!(has(&rig, "Line of steering wheel rate"), "back");
     assert_eq!(traces(&rig), before, "as high as before");
+}
+
+/// Writes the strip and its cards as PNG into the folder named by `HELMSPLIT_SHOTS`.
+#[test]
+#[ignore = "writes pictures to look at"]
+fn pictures_of_the_manoeuvre() {
+    let Ok(folder) = std::env::var("HELMSPLIT_SHOTS") else {
+        panic!("name a folder in HELMSPLIT_SHOTS");
+    };
+    for (size, dimensions) in [("small", [1280.0, 720.0]), ("large", [1920.0, 1080.0])] {
+        for (name, appearance) in [("light", Appearance::Light), ("dark", Appearance::Dark)] {
+            let mut rig = Rig::with(dimensions, appearance, "orchard carrier");
+            let shoot = |rig: &mut Rig, page: &str| {
+                let picture = rig.harness.render().expect("a picture");
+                let path = format!("{folder}/manoeuvre-{page}-{size}-{name}.png");
+                picture.save(&path).expect("written");
+            };
+            rig.click("Numbers");
+            shoot(&mut rig, "wheel");
+            rig.click_beginning("Edit engine speed");
+            let at = middle(&rig, "engine speed, point 2 of 5");
+            let way = vec2(moment(&rig, 5.0) - moment(&rig, 1.0), 12.0);
+            drag(&mut rig, at, way);
+            shoot(&mut rig, "drag");
+            drop_at(&mut rig, at + way);
+            rig.enter("engine speed, point 3, value", "90 bar");
+            rig.solve();
+            shoot(&mut rig, "table");
+            rig.click("Add template");
+            shoot(&mut rig, "menu");
+        }
+    }
 }
