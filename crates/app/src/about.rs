@@ -112,7 +112,7 @@ pub(crate) fn keys(ui: &mut Ui, look: &Look) {
             .num_columns(2)
             .spacing([24.0, 4.0])
             .show(ui, |ui| {
-                for (key, what) in KEYS {
+                for &(key, what) in KEYS {
                     ui.label(RichText::new(key).strong());
                     ui.label(RichText::new(what).color(look.ink()));
                     ui.end_row();

@@ -44,8 +44,10 @@ pub(crate) fn lists(
 ) {
     match part.section {
         "manoeuvre" => {
-            templates_card::templates(ui, context, &mut states.lists, actions);
-            points_card::points(ui, context, &mut states.lists, actions);
+            let lists = &mut states.lists;
+            let line = points_card::line_choice(ui, context, lists);
+            templates_card::templates(ui, line, context, lists, actions);
+            points_card::points(ui, line, context, lists, actions);
         }
         "valve" if context.scenario.chosen::<ValveLand>() == ValveLand::Table => {
             land_card::land(ui, context, &mut states.lists, actions);

@@ -2,7 +2,7 @@
 
 use egui::{ComboBox, RichText, Ui, vec2};
 use helmsplit_model::{Input, Quantity};
-use helmsplit_scenario::manoeuvre::Line;
+use helmsplit_scenario::manoeuvre::{Line, input_row};
 use helmsplit_scenario::quantity_text::{Digits, text_from_si};
 use helmsplit_scenario::units::{Unit, si_unit};
 
@@ -27,34 +27,45 @@ const FIELD: f32 = 92.0;
 /// A new point behind the last stands so much later, s.
 const LATER: f64 = 1.0;
 
-/// Draws the table.
-pub(super) fn points(
+/// Draws the choice of the line whose lists stand below; gives the line.
+pub(super) fn line_choice(
     ui: &mut Ui,
     context: &FieldContext<'_>,
     states: &mut ListStates,
-    actions: &mut Vec<Action>,
-) {
-    ui.add_space(6.0);
-    ui.separator();
+) -> Input {
     let shown = lines_of(context.scenario);
-    let chosen = states.line_of(&shown);
+    let mut chosen = states.line_of(&shown);
+    ui.add_space(6.0);
     ui.horizontal(|ui| {
-        let label = ui.label(RichText::new("Breakpoints of").strong());
-        let (row, _) = row_and_unit(chosen, context.units);
-        ComboBox::from_id_salt("line of the table")
-            .width(160.0)
-            .selected_text(row.label)
+        let label = ui.label(RichText::new("Line").strong());
+        ComboBox::from_id_salt("line of the lists")
+            .width(180.0)
+            .selected_text(input_row(chosen).label)
             .show_ui(ui, |ui| {
                 for &input in &shown {
-                    let (row, _) = row_and_unit(input, context.units);
-                    if ui.selectable_label(input == chosen, row.label).clicked() {
+                    let label = input_row(input).label;
+                    if ui.selectable_label(input == chosen, label).clicked() {
                         states.line = Some(input);
+                        chosen = input;
                     }
                 }
             })
             .response
             .labelled_by(label.id);
     });
+    chosen
+}
+
+/// Draws the table.
+pub(super) fn points(
+    ui: &mut Ui,
+    chosen: Input,
+    context: &FieldContext<'_>,
+    states: &mut ListStates,
+    actions: &mut Vec<Action>,
+) {
+    ui.separator();
+    ui.label(RichText::new("Breakpoints").strong());
     let (row, unit) = row_and_unit(chosen, context.units);
     let line = context.scenario.manoeuvre.line(row).ok();
     let free = context.scenario.manoeuvre.free(chosen);

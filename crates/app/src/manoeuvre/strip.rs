@@ -23,6 +23,9 @@ const HEIGHTS: std::ops::RangeInclusive<f32> = 104.0..=460.0;
 /// Height of the bars of templates, points.
 const BARS: f32 = 17.0;
 
+/// Room above a line without templates, points.
+const NO_BARS: f32 = 6.0;
+
 /// Room for the numbers of the value axis and for names, where no traces give it, points.
 const LEFT: f32 = 52.0;
 const RIGHT: f32 = 216.0;
@@ -84,8 +87,9 @@ pub(crate) fn strip(
     }
     let lists = &mut states.lists;
     let (row, unit) = row_and_unit(chosen, context.units);
-    let plot = plot_rect(body, ends, BARS);
     let line = context.scenario.manoeuvre.line(row).ok();
+    let written = line.as_ref().is_some_and(|line| !line.spans().is_empty());
+    let plot = plot_rect(body, ends, if written { BARS } else { NO_BARS });
     let held = lists.drag.map(|drag| drag.axis);
     let value = value_axis(line.as_ref(), row, unit, plot, held);
     let bounds = PlotBounds::from_min_max([time.low, value.low], [time.high, value.high]);

@@ -1,13 +1,13 @@
 //! Templates with their numbers, in the order of time.
 
 use egui::{Align, Layout, RichText, Ui, vec2};
+use helmsplit_model::Input;
 use helmsplit_scenario::Value;
 use helmsplit_scenario::convert::template_unit;
-use helmsplit_scenario::manoeuvre::{INPUTS, TemplateParameter, TemplateUse};
+use helmsplit_scenario::manoeuvre::{TemplateParameter, TemplateUse, input_row};
 
 use super::edit::ListEdit;
 use super::head::template_menu;
-use super::names::line_name;
 use super::number::Number;
 use super::state::{Cell, ListStates};
 use crate::action::Action;
@@ -22,11 +22,11 @@ const UNIT_WIDTH: f32 = 54.0;
 /// Draws the list.
 pub(super) fn templates(
     ui: &mut Ui,
+    chosen: Input,
     context: &FieldContext<'_>,
     states: &mut ListStates,
     actions: &mut Vec<Action>,
 ) {
-    ui.add_space(6.0);
     ui.horizontal(|ui| {
         ui.label(RichText::new("Templates").strong());
         ui.menu_button("Add...", |ui| {
@@ -36,27 +36,17 @@ pub(super) fn templates(
         .on_hover_text("Adds a ready manoeuvre in the first gap of its line.");
     });
     let lines = &context.scenario.manoeuvre;
-    if lines.templates.is_empty() {
-        ui.weak("None. A template writes the breakpoints of one line from a few numbers.");
+    let places = lines.templates_of(input_row(chosen));
+    if places.is_empty() {
+        ui.weak("None. A template writes a stretch of its line from a few numbers.");
     }
-    for row in &INPUTS {
-        let places = lines.templates_of(row);
-        for (order, &place) in places.iter().enumerate() {
-            let ahead = order.checked_sub(1).map(|order| places[order]);
-            let behind = order + 1 < places.len();
-            let template = &lines.templates[place];
-            heading(ui, template, place, ahead, behind, actions);
-            for (number, value) in template.numbers() {
-                field(
-                    ui,
-                    template,
-                    place,
-                    (number, value),
-                    context,
-                    states,
-                    actions,
-                );
-            }
+    for (order, &place) in places.iter().enumerate() {
+        let ahead = order.checked_sub(1).map(|order| places[order]);
+        let behind = order + 1 < places.len();
+        let template = &lines.templates[place];
+        heading(ui, template, place, ahead, behind, actions);
+        for number in template.numbers() {
+            field(ui, template, place, number, context, states, actions);
         }
     }
 }
@@ -74,15 +64,10 @@ fn heading(
     let kind = template.kind.template();
     let at = template.value("at").map(Value::text).unwrap_or_default();
     let name = format!("{} at {at}", kind.key);
-    ui.horizontal(|ui| {
-        ui.spacing_mut().item_spacing.x = 4.0;
-        ui.label(RichText::new(kind.label).strong())
-            .on_hover_text(kind.note);
-        let line = line_name(kind.drives);
-        ui.label(RichText::new(line).size(SMALL).weak());
-    });
     ui.horizontal_wrapped(|ui| {
         ui.spacing_mut().item_spacing = vec2(4.0, 2.0);
+        ui.label(RichText::new(kind.label).strong())
+            .on_hover_text(kind.note);
         let mut button = |ui: &mut Ui, text: &str, note: &str, edit: Option<ListEdit>| {
             let button = egui::Button::new(RichText::new(text).size(SMALL)).small();
             let response = ui
