@@ -49,6 +49,7 @@ pub(super) fn bars(
             count: line.spans().len(),
             ahead: place.checked_sub(1).is_some(),
             behind: place + 1 < line.spans().len(),
+            next: line.spans().get(place + 1).map(|next| next.begin),
         };
         let response = bar.interact(ui, states);
         bar.take(ui, &response, states, actions);
@@ -86,6 +87,8 @@ struct Bar<'a> {
     /// Whether templates stand ahead of it and behind it.
     ahead: bool,
     behind: bool,
+    /// Begin of the next one, s.
+    next: Option<f64>,
 }
 
 impl Bar<'_> {
@@ -248,7 +251,12 @@ impl Bar<'_> {
             Stroke::new(1.0, colour)
         };
         painter.rect_stroke(rect, 3.0, edge, egui::StrokeKind::Inside);
-        clipped_text(ui, rect.intersect(self.row), self.label(), look);
+        // A name longer than its bar goes on until the next one.
+        let end = self.next.map_or(self.row.right(), |begin| {
+            self.stage.at(begin, 0.0).x.min(self.row.right())
+        });
+        let room = Rect::from_min_max(rect.min, pos2(end.max(rect.right()), rect.bottom()));
+        clipped_text(ui, room.intersect(self.row), self.label(), look);
     }
 
     fn menu(&self, response: &Response, actions: &mut Vec<Action>) {

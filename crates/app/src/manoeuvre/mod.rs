@@ -45,7 +45,7 @@ pub(crate) fn lists(
     match part.section {
         "manoeuvre" => {
             let lists = &mut states.lists;
-            let line = points_card::line_choice(ui, context, lists);
+            let line = points_card::line_choice(ui, context, lists, actions);
             templates_card::templates(ui, line, context, lists, actions);
             points_card::points(ui, line, context, lists, actions);
         }

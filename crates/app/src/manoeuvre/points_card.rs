@@ -7,6 +7,7 @@ use helmsplit_scenario::quantity_text::{Digits, text_from_si};
 use helmsplit_scenario::units::{Unit, si_unit};
 
 use super::edit::ListEdit;
+use super::head::template_menu;
 use super::mark::number_text;
 use super::names::line_name;
 use super::number::Number;
@@ -32,6 +33,7 @@ pub(super) fn line_choice(
     ui: &mut Ui,
     context: &FieldContext<'_>,
     states: &mut ListStates,
+    actions: &mut Vec<Action>,
 ) -> Input {
     let shown = lines_of(context.scenario);
     let mut chosen = states.line_of(&shown);
@@ -52,6 +54,11 @@ pub(super) fn line_choice(
             })
             .response
             .labelled_by(label.id);
+        ui.menu_button("Add...", |ui| {
+            template_menu(ui, context.scenario, 0.0, actions);
+        })
+        .response
+        .on_hover_text("A template: it writes a stretch of its line from a few numbers.");
     });
     chosen
 }

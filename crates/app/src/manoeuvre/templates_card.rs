@@ -7,7 +7,6 @@ use helmsplit_scenario::convert::template_unit;
 use helmsplit_scenario::manoeuvre::{TemplateParameter, TemplateUse, input_row};
 
 use super::edit::ListEdit;
-use super::head::template_menu;
 use super::number::Number;
 use super::state::{Cell, ListStates};
 use crate::action::Action;
@@ -27,19 +26,8 @@ pub(super) fn templates(
     states: &mut ListStates,
     actions: &mut Vec<Action>,
 ) {
-    ui.horizontal(|ui| {
-        ui.label(RichText::new("Templates").strong());
-        ui.menu_button("Add...", |ui| {
-            template_menu(ui, context.scenario, 0.0, actions);
-        })
-        .response
-        .on_hover_text("Adds a ready manoeuvre in the first gap of its line.");
-    });
     let lines = &context.scenario.manoeuvre;
     let places = lines.templates_of(input_row(chosen));
-    if places.is_empty() {
-        ui.weak("None. A template writes a stretch of its line from a few numbers.");
-    }
     for (order, &place) in places.iter().enumerate() {
         let ahead = order.checked_sub(1).map(|order| places[order]);
         let behind = order + 1 < places.len();
