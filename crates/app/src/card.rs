@@ -111,6 +111,7 @@ fn choice_menu(
             .on_hover_text(choice.note);
         ComboBox::from_id_salt(choice.path)
             .width(160.0)
+            .truncate()
             .selected_text(choice.options[usize::from(at)].label)
             .show_ui(ui, |ui| {
                 for (option, row) in (0_u8..).zip(choice.options) {

@@ -1,6 +1,6 @@
 //! The response page: the drawing and the card of a part on the left, traces on the right, evidence on demand.
 
-use egui::{CentralPanel, Frame, Margin, Panel, RichText, Ui};
+use egui::{CentralPanel, Frame, Margin, Panel, RichText, Sense, Ui, UiBuilder};
 use helmsplit_study::{Check, CheckId};
 
 use crate::action::Action;
@@ -16,10 +16,11 @@ use crate::traces::{Shown, TraceView, traces};
 
 /// Narrowest pane of the drawing, and what is left to the traces, points.
 const DRAWING_WIDTH: f32 = 340.0;
-const TRACES_WIDTH: f32 = 360.0;
+const TRACES_WIDTH: f32 = 460.0;
 
-/// Share of the width that the drawing takes at first.
+/// Share of the width that the drawing takes at first, and at most so much, points.
 const DRAWING_SHARE: f32 = 0.42;
+const WIDEST_AT_FIRST: f32 = 820.0;
 
 /// Narrowest and widest pane of evidence, points.
 const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
@@ -52,14 +53,20 @@ pub(crate) fn response_page(
     let frame = Frame::NONE
         .fill(ui.visuals().panel_fill)
         .inner_margin(Margin::symmetric(10, 6));
+    let at_first = (DRAWING_SHARE * ui.available_width()).min(WIDEST_AT_FIRST);
     // The scale of the window takes effect after its first frame: each has its own width.
     let scale = (100.0 * ui.ctx().zoom_factor()).round() as u32;
     Panel::left(("drawing", scale))
         .frame(frame)
-        .default_size((DRAWING_SHARE * ui.available_width()).clamp(DRAWING_WIDTH, widest))
+        .default_size(at_first.clamp(DRAWING_WIDTH, widest))
         .size_range(DRAWING_WIDTH..=widest)
         .show(ui, |ui| {
-            left_pane(ui, page, states, (view, drawing), actions);
+            // A row that is a little too wide must not widen the pane, frame by frame.
+            let room = ui.available_rect_before_wrap();
+            let mut inside = ui.new_child(UiBuilder::new().max_rect(room));
+            inside.set_clip_rect(room.expand(2.0).intersect(ui.clip_rect()));
+            left_pane(&mut inside, page, states, (view, drawing), actions);
+            ui.allocate_rect(room, Sense::hover());
         });
     let open = page
         .evidence

@@ -4,10 +4,11 @@ use egui::accesskit::{Action as SpokenAction, Role};
 use egui::{EventFilter, Id, Key, Rect, Response, Sense, Ui, Vec2, WidgetInfo};
 use helmsplit_model::Circuit;
 use helmsplit_scenario::{Findings, UnitSystem};
-use helmsplit_view::diagram::DrawingOptions;
+use helmsplit_view::diagram::{DrawingOptions, Notes};
 use helmsplit_view::scene::Scene;
-use helmsplit_view::{Moment, circuit_scene, part_readings, valve_scene};
+use helmsplit_view::{Moment, circuit_scene};
 
+use super::fit::fitted_section;
 use super::flow::{self, Phases};
 use super::ink::Ink;
 use super::names::{meant, section_of};
@@ -51,13 +52,6 @@ pub(crate) struct Drawn<'a> {
     /// What is wrong with the present circuit.
     pub(crate) findings: &'a Findings,
 }
-
-/// Room around the section for names that reach beyond it, and for margins, px.
-const AROUND_NOTES: f64 = 114.0;
-const AROUND_BARE: f64 = 36.0;
-
-/// The section is drawn no shorter and no longer, px.
-const SECTION: std::ops::RangeInclusive<f64> = 320.0..=1400.0;
 
 /// What a scene depends on.
 #[derive(Debug, Clone, PartialEq)]
@@ -221,12 +215,12 @@ impl Canvas {
             units: drawn.units,
             values,
             scale_bar: false,
-            notes,
+            notes: if notes { Notes::Full } else { Notes::None },
             ..DrawingOptions::default()
         };
         let scene = match self.subject {
             Subject::Circuit => circuit_scene(drawn.circuit, drawn.moment, options),
-            Subject::Section => section(frame.size(), drawn, options),
+            Subject::Section => fitted_section(frame.size(), drawn, options),
         };
         self.scene = Some((key, scene));
         self.made += 1;
@@ -286,7 +280,7 @@ impl Canvas {
             response
                 .widget_info(|| WidgetInfo::selected(Role::Button, true, selected, &control.name));
             if ui.ctx().has_accesskit_node(id) {
-                let told = readings_text(drawn, &control.part_id);
+                let told = told::in_words(drawn, &control.part_id);
                 ui.ctx().accesskit_node_builder(id, |node| {
                     node.set_description(told);
                     node.add_action(SpokenAction::Click);
@@ -364,44 +358,8 @@ fn describe(ui: &Ui, id: Id, text: &str) {
     }
 }
 
-fn readings_text(drawn: &Drawn<'_>, id: &str) -> String {
-    let Some(moment) = drawn.moment else {
-        return "Not solved yet".to_owned();
-    };
-    let told = part_readings(drawn.circuit, moment, id, drawn.units);
-    let rows: Vec<String> = told
-        .into_iter()
-        .map(|reading| format!("{} {}", reading.name, reading.text))
-        .collect();
-    rows.join("; ")
-}
-
 /// The part under the pointer, as its index.
 fn pointed_at(scene: &Scene, response: &Response, sheet: &Sheet) -> Option<usize> {
     let at = response.hover_pos()?;
     sheet.hit(scene, at)
-}
-
-/// The section, as long as fits with letters at their own size.
-fn section(room: Vec2, drawn: &Drawn<'_>, options: DrawingOptions) -> Scene {
-    let around = if options.notes {
-        AROUND_NOTES
-    } else {
-        AROUND_BARE
-    };
-    let made = |length: f64| {
-        let options = DrawingOptions {
-            section_length: length.clamp(*SECTION.start(), *SECTION.end()),
-            ..options
-        };
-        valve_scene(drawn.circuit, drawn.moment, None, options)
-    };
-    let length = f64::from(room.x) - around;
-    let scene = made(length);
-    let excess = scene.bounds.height() - f64::from(room.y);
-    let Some(housing) = scene.part("valve.housing").filter(|_| excess > 0.0) else {
-        return scene;
-    };
-    let slope = housing.bounds.height() / housing.bounds.width();
-    made(housing.bounds.width() - excess / slope)
 }

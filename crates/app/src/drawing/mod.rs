@@ -7,6 +7,7 @@
 mod canvas;
 mod export;
 mod fill;
+mod fit;
 mod flow;
 mod ink;
 mod labels;
@@ -51,6 +52,10 @@ impl Choice {
         (Self::Both, "Both"),
     ];
 }
+
+/// Share of the height of the pane that the drawings take at first: one of them, and both.
+const HEIGHT_OF_ONE: f32 = 0.56;
+const HEIGHT_OF_BOTH: f32 = 0.7;
 
 /// Share of the height that the section takes beside the circuit.
 const SECTION_SHARE: f32 = 0.3;
@@ -197,9 +202,11 @@ pub(crate) fn drawings(
     toolbar(ui, state, source);
     let room = ui.available_height();
     let scale = (100.0 * ui.ctx().zoom_factor()).round() as u32;
-    Panel::top(("drawings", scale))
+    let both = state.choice == Choice::Both;
+    let share = if both { HEIGHT_OF_BOTH } else { HEIGHT_OF_ONE };
+    Panel::top(("drawings", scale, both))
         .resizable(true)
-        .default_size(0.56 * room)
+        .default_size(share * room)
         .size_range(120.0..=(room - 120.0).max(121.0))
         .frame(egui::Frame::NONE)
         .show(ui, |ui| sheets(ui, source, state, view.cursor, actions));
@@ -280,7 +287,7 @@ fn sheets(
         selected: source.selected,
         findings: source.findings,
     };
-    let size = ui.available_size();
+    let size = ui.available_size().floor();
     let chosen = match choice {
         Choice::Circuit => circuit.show(ui, size, &drawn, (*values, true)),
         Choice::Section => section.show(ui, size, &drawn, (*values, true)),

@@ -26,7 +26,8 @@ pub(super) fn bar(ui: &mut Ui, source: &Source<'_>) {
     let places = usize::from(most < 20.0);
     let number = |share: f64| on_screen(&number_text(most * share, places));
     let symbol = on_screen(&unit_text(unit));
-    let (row, response) = ui.allocate_exact_size(vec2(ui.available_width(), 14.0), Sense::hover());
+    let (row, response) =
+        ui.allocate_exact_size(vec2(ui.available_width().floor(), 14.0), Sense::hover());
     let spoken = format!(
         "Pressure scale, {} to {} {symbol}",
         number(0.0),

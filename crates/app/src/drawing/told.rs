@@ -20,7 +20,9 @@ pub(super) fn tell(ui: &mut Ui, drawn: &Drawn<'_>, id: &str, label: &str) {
         return;
     };
     let told = part_readings(drawn.circuit, moment, id, drawn.units);
-    Grid::new(("told", id)).num_columns(2).show(ui, |ui| {
+    ui.spacing_mut().interact_size.y = 0.0;
+    let grid = Grid::new(("told", id)).num_columns(2);
+    grid.spacing([16.0, 2.0]).show(ui, |ui| {
         for reading in &told {
             ui.label(RichText::new(&reading.name).color(look.quiet()));
             ui.with_layout(egui::Layout::right_to_left(egui::Align::Center), |ui| {
@@ -47,4 +49,17 @@ pub(super) fn tell_beside(response: &Response, drawn: &Drawn<'_>, part: &Part) {
     let context = response.ctx.clone();
     let tooltip = Tooltip::always_open(context, response.layer_id, response.id, response);
     tooltip.show(|ui| tell(ui, drawn, meant(&part.id), &part.label));
+}
+
+/// The same in one line, for screen readers.
+pub(super) fn in_words(drawn: &Drawn<'_>, id: &str) -> String {
+    let Some(moment) = drawn.moment else {
+        return "Not solved yet".to_owned();
+    };
+    let told = part_readings(drawn.circuit, moment, id, drawn.units);
+    let rows: Vec<String> = told
+        .into_iter()
+        .map(|reading| format!("{} {}", reading.name, reading.text))
+        .collect();
+    rows.join("; ")
 }

@@ -198,6 +198,15 @@ fn the_run_is_played_stepped_and_scrubbed() {
     let stopped = rig.app().cursor();
     rig.harness.run_steps(30);
     assert!((rig.app().cursor() - stopped).abs() < 1e-12, "stopped");
+    rig.harness.get_by_label("Traces over time").focus();
+    rig.settle();
+    rig.harness.key_press(Key::Space);
+    rig.harness.run_steps(30);
+    assert!(
+        rig.app().cursor() > stopped + 0.3,
+        "Space in the traces too"
+    );
+    rig.click("Pause");
 }
 
 #[test]
@@ -343,5 +352,63 @@ fn screenshots() {
         picture
             .save(format!("{folder}/{name}.png"))
             .expect("written");
+    }
+}
+
+/// Writes what pointing, focus, playing and a failed solve look like.
+#[test]
+#[ignore = "writes pictures to look at"]
+fn screenshots_of_states() {
+    let Ok(folder) = std::env::var("HELMSPLIT_SHOTS") else {
+        panic!("name a folder in HELMSPLIT_SHOTS");
+    };
+    let mut rig = Rig::with([1280.0, 720.0], Appearance::Light, "nursery loader");
+    let shoot = |rig: &mut Rig, name: &str| {
+        rig.harness.run_steps(60);
+        let picture = rig.harness.render().expect("a picture");
+        picture
+            .save(format!("{folder}/{name}.png"))
+            .expect("written");
+    };
+    put_cursor(&mut rig, 3.4);
+    rig.click("Return");
+    rig.harness
+        .get_by_role_and_label(Role::Button, "Steering unit")
+        .hover();
+    shoot(&mut rig, "state-hover");
+    rig.harness
+        .get_by_role_and_label(Role::Button, "Excess relief")
+        .focus();
+    shoot(&mut rig, "state-focus");
+    rig.click("Play");
+    rig.harness.run_steps(9);
+    rig.click("Larger");
+    rig.click("Larger");
+    shoot(&mut rig, "state-playing-zoomed");
+    rig.click("Pause");
+    rig.click("Priority valve");
+    rig.enter("Overlap of the excess land", "9 mm");
+    shoot(&mut rig, "state-pale");
+}
+
+#[test]
+fn the_pane_keeps_its_width_at_every_scale_and_with_every_card() {
+    for scale in [80, 100, 125, 150, 175] {
+        let size = [1367.0, 771.0];
+        let mut rig = Rig::scaled(size, scale, Appearance::Light, "frost pruner");
+        let width = |rig: &Rig| {
+            let drawing = rig.harness.get_by_label("Circuit drawing");
+            drawing.rect().width()
+        };
+        let before = width(&rig);
+        for part in ["Return", "Pump", "Priority valve"] {
+            rig.click(part);
+            rig.harness.run_steps(40);
+            let found = width(&rig);
+            assert!(
+                (found - before).abs() < 1.0,
+                "{scale} %, {part}: {before} points became {found}"
+            );
+        }
     }
 }

@@ -24,8 +24,20 @@ pub struct DrawingOptions {
     pub scale_bar: bool,
     /// Length of the valve in section, px at 100 %; texts and lines keep their size. Default: 800.
     pub section_length: f64,
-    /// Whether names, sizes and the scale of travel stand around the section. Default: yes.
-    pub notes: bool,
+    /// What stands around the section. Default: everything.
+    pub notes: Notes,
+}
+
+/// What stands around the valve in section.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
+pub enum Notes {
+    /// Nothing: the bodies alone.
+    None,
+    /// Names, and the scale of travel.
+    Names,
+    /// Names with sizes and pressures, and the scale of travel.
+    #[default]
+    Full,
 }
 
 impl Default for DrawingOptions {
@@ -35,7 +47,7 @@ impl Default for DrawingOptions {
             values: true,
             scale_bar: true,
             section_length: 800.0,
-            notes: true,
+            notes: Notes::Full,
         }
     }
 }

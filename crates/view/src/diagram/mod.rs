@@ -19,7 +19,7 @@ mod symbols;
 mod tests;
 mod valve;
 
-pub use context::DrawingOptions;
+pub use context::{DrawingOptions, Notes};
 pub(crate) use context::{size_text, value_text};
 
 use helmsplit_model::{Circuit, ExcessSide, PriorityRelief, SteeringSide};

@@ -68,18 +68,19 @@ impl Sheet<'_> {
         }
         // Into the inlet and out of the others: up, either way.
         let middle = self.at(middle, 0.5 * (from + to));
-        self.flow_arrow(pen, middle, signal);
+        let room = 0.42 * (self.half_height - s.core_radius) * self.px_per_mm;
+        self.flow_arrow(pen, middle, (signal, room));
         port
     }
 
-    /// An arrow up if a flow is positive, down if negative.
-    fn flow_arrow(&self, pen: &mut PartPen, (x, y): (f64, f64), signal: Signal) {
+    /// An arrow up if a flow is positive, down if negative, at most `room` px to both sides.
+    fn flow_arrow(&self, pen: &mut PartPen, (x, y): (f64, f64), (signal, room): (Signal, f64)) {
         let flow = self.moment.and_then(|moment| moment.signal(signal));
         let Some(flow) = flow.filter(|flow| flow.abs() > LEAST_FLOW) else {
             return;
         };
         let up = flow.signum();
-        let half = ARROW * (flow.abs() / LARGE_FLOW).sqrt().clamp(0.4, 1.0);
+        let half = ARROW.min(room) * (flow.abs() / LARGE_FLOW).sqrt().clamp(0.4, 1.0);
         pen.push(Prim::Arrow {
             tip: (x, y - up * half).into(),
             direction: Vec2::new(0.0, -up),

@@ -19,7 +19,7 @@ mod travel_scale;
 
 use helmsplit_model::{Circuit, Quantity};
 
-use crate::diagram::{DrawingOptions, value_text};
+use crate::diagram::{DrawingOptions, Notes, value_text};
 use crate::moment::Moment;
 use crate::ramp::PressureScale;
 use crate::scale_bar::scale_bar;
@@ -74,7 +74,7 @@ pub fn valve_scene(
     sheet.moving(&mut parts);
     let x = (SCALES_X.0 * length).max(SCALES_X.1);
     let mut foot = sheet.at(0.0, -sheet.half_height).1;
-    if options.notes {
+    if options.notes != Notes::None {
         foot = sheet.notes(&mut parts, valve, options) + TO_TRAVEL;
         parts.push(sheet.travel_scale((x, foot), options));
     }

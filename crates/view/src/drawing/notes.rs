@@ -4,7 +4,7 @@ use helmsplit_model::{LandShape, PriorityValve, Quantity};
 use helmsplit_scenario::UnitSystem;
 
 use super::sheet::Sheet;
-use crate::diagram::{DrawingOptions, size_text, value_text};
+use crate::diagram::{DrawingOptions, Notes, size_text, value_text};
 use crate::scene::{Anchor, LINE_SPACING, Line, Paint, Part, PartPen, Prim, Stroke, Tone};
 use crate::style::TextSize;
 use crate::svg::label_width;
@@ -12,14 +12,35 @@ use crate::svg::label_width;
 /// Least distance between two notes of a row, px.
 const GAP: f64 = 16.0;
 
-/// From the housing to the nearer edge of a row of notes, px.
-const DISTANCE: f64 = 22.0;
+/// From the housing to the nearer edge of a row of notes, px: with details, and of names alone.
+const DISTANCE: (f64, f64) = (22.0, 14.0);
 
 /// Between two rows, px.
 const ROW_GAP: f64 = 10.0;
 
-/// Height of a row: name and detail, px.
-pub(super) const ROW: f64 = 2.0 * LINE_SPACING;
+/// Size of the rows of notes.
+#[derive(Debug, Clone, Copy)]
+struct Rows {
+    /// Height of a row, px.
+    height: f64,
+    /// From the housing to the nearer row, px.
+    distance: f64,
+}
+
+impl Rows {
+    fn of(notes: Notes) -> Self {
+        match notes {
+            Notes::Full => Self {
+                height: 2.0 * LINE_SPACING,
+                distance: DISTANCE.0,
+            },
+            Notes::Names | Notes::None => Self {
+                height: LINE_SPACING,
+                distance: DISTANCE.1,
+            },
+        }
+    }
+}
 
 /// A note: what it names, and where that is.
 struct Note {
@@ -112,21 +133,28 @@ impl Sheet<'_> {
             self.at(self.left, 0.0).0 - 40.0,
             self.at(self.right, 0.0).0 + 40.0,
         );
-        let above = self.notes_above(valve, options);
+        let rows = Rows::of(options.notes);
+        let told = |mut notes: Vec<Note>| {
+            if options.notes != Notes::Full {
+                notes.iter_mut().for_each(|note| note.detail.clear());
+            }
+            notes
+        };
+        let above = told(self.notes_above(valve, options));
         for (note, place) in above.iter().zip(places(&above, room)) {
-            parts.push(drawn(note, place, top - DISTANCE, -1.0));
+            parts.push(drawn(note, place, rows, (top - rows.distance, -1.0)));
         }
-        let below = self.notes_below(valve, options);
+        let below = told(self.notes_below(valve, options));
         let places = places(&below, room);
         for (note, place) in below.iter().zip(&places) {
-            parts.push(drawn(note, *place, foot + DISTANCE, 1.0));
+            parts.push(drawn(note, *place, rows, (foot + rows.distance, 1.0)));
         }
-        let rows = if places.iter().any(|place| place.far) {
-            ROW + ROW_GAP
+        let further = if places.iter().any(|place| place.far) {
+            rows.height + ROW_GAP
         } else {
             0.0
         };
-        foot + DISTANCE + ROW + rows
+        foot + rows.distance + rows.height + further
     }
 
     /// The pressure of that name, if it is known and wanted.
@@ -264,14 +292,15 @@ fn edge_text(shape: &LandShape, units: UnitSystem) -> String {
 
 /// Name and detail with a leader to the target. `edge` is the edge of the nearer row that faces the
 /// section; `outward` is 1 if the rows go down from there, -1 if up.
-fn drawn(note: &Note, place: Place, edge: f64, outward: f64) -> Part {
+fn drawn(note: &Note, place: Place, rows: Rows, (edge, outward): (f64, f64)) -> Part {
     let mut pen = PartPen::new(note.id, note.name);
-    let shift = if place.far { ROW + ROW_GAP } else { 0.0 };
+    let height = rows.height;
+    let shift = if place.far { height + ROW_GAP } else { 0.0 };
     let own_edge = edge + outward * shift;
     let top = if outward > 0.0 {
         own_edge
     } else {
-        own_edge - ROW
+        own_edge - height
     };
     let at = (place.middle, top + TextSize::Label.px() * 0.8);
     pen.label(at, &note.detail, Anchor::Middle);

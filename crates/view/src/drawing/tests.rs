@@ -257,9 +257,17 @@ fn no_text_touches_a_line_or_a_text() {
                 helmsplit_scenario::UnitSystem::Us,
                 helmsplit_scenario::UnitSystem::Si,
             ] {
-                for section_length in [800.0, 640.0, 480.0, 400.0] {
+                for (section_length, notes) in [
+                    (800.0, Notes::Full),
+                    (640.0, Notes::Full),
+                    (480.0, Notes::Full),
+                    (400.0, Notes::Full),
+                    (400.0, Notes::Names),
+                    (320.0, Notes::Names),
+                ] {
                     let options = DrawingOptions {
                         units,
+                        notes,
                         section_length,
                         ..DrawingOptions::default()
                     };
@@ -279,7 +287,7 @@ fn a_bare_section_has_bodies_alone() {
     let circuit = circuit("orchard_carrier");
     let options = DrawingOptions {
         section_length: 300.0,
-        notes: false,
+        notes: Notes::None,
         ..DrawingOptions::default()
     };
     let scene = valve_scene(&circuit, None, Some(0.002), options);
