@@ -40,18 +40,47 @@ const KEYS: &[(&str, &str)] = &[
     ("Page up, Page down", "In a field: ten steps more or less"),
     ("Wheel", "In a field: one step more or less"),
     ("Drag a name", "The value beside it"),
+    ("Ctrl+K", "Keep this run under a name"),
     (
         "Left, Right",
-        "In the traces: cursor by a pixel, with Shift by twenty",
+        "In the traces: cursor A by a pixel, with Shift by twenty",
     ),
-    ("Home, End", "In the traces: cursor to start or end"),
+    (
+        "Alt+Left, Alt+Right",
+        "In the traces: cursor B by a pixel, with Shift by twenty",
+    ),
+    ("Home, End", "In the traces: cursor A to start or end"),
+    ("B, X", "In the traces: cursor B to A; change the two over"),
+    ("Escape", "In the traces: take cursor B away"),
+    (
+        "N, Shift+N",
+        "In the traces: cursor A to the next, the last event",
+    ),
+    ("Up, Down", "In the traces: pick a panel; with Alt move it"),
+    (
+        "H, Shift+H",
+        "In the traces: hide the picked panel; show everything",
+    ),
+    (
+        "Y, T",
+        "In the traces: value axes follow the zoom or stay; table of readings",
+    ),
+    ("Ctrl+C", "In the traces: copy the values at cursor A"),
     (
         "Plus, Minus, 0",
         "In the traces: zoom in, zoom out, whole run",
     ),
     ("Ctrl+wheel", "Over the traces: zoom around the pointer"),
     ("Shift+wheel", "Over the traces: move along"),
-    ("Click or drag", "In the traces: put the cursor"),
+    (
+        "Click or drag",
+        "In the traces: put cursor A, with Shift cursor B",
+    ),
+    (
+        "Drag names",
+        "Beside the traces: move the panel to another place",
+    ),
+    ("Click, other button", "On traces and names: their menus"),
     ("Drag, other button", "In the traces: zoom to the stretch"),
     ("Double click", "In the traces: whole run"),
     (

@@ -9,7 +9,9 @@ use helmsplit_study::CheckId;
 use crate::command::{Command, Stage};
 use crate::dialogs::Dialog;
 use crate::drawing::Export;
+use crate::export::{ExportForm, ExportKind};
 use crate::files::ask_path::AskPath;
+use crate::kept::KeptAction;
 use crate::parts::Part;
 use crate::settings::Appearance;
 
@@ -45,6 +47,18 @@ pub(crate) enum Action {
     /// Open the evidence of a check and jump to its moment.
     Evidence(CheckId),
     CloseEvidence,
+    /// Something about kept runs.
+    Kept(KeptAction),
+    /// Ask how traces or data are to be exported.
+    AskExport(ExportKind),
+    /// Ask where to.
+    AskExportFile(ExportForm),
+    /// Write traces or data.
+    ExportTraces(ExportKind, PathBuf),
+    /// Put the values at the cursor on the clipboard.
+    CopyValues,
+    /// Put the whole table of readings on the clipboard.
+    CopyTable,
     /// Close the window.
     Quit,
     /// Do this although changes are not saved.

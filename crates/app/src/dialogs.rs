@@ -6,7 +6,9 @@ use egui::{Context, Id, Modal, RichText, ScrollArea, Ui};
 
 use crate::about;
 use crate::action::{Action, Filing};
+use crate::export::{ExportForm, export_dialog};
 use crate::files::ask_path::{PathDialog, path_dialog};
+use crate::kept::{RunName, name_dialog};
 use crate::look::Look;
 
 /// What lies over the window.
@@ -24,6 +26,10 @@ pub(crate) enum Dialog {
     Offers { offers: Vec<OfferLine> },
     /// The circuit is edited and something else would replace it.
     Unsaved { next: Box<Action> },
+    /// Where to export traces or data to.
+    ExportTraces(ExportForm),
+    /// The name of a run.
+    RunName(RunName),
     /// The list of keys.
     Keys,
     /// Version, licences, cautions, what is not modelled.
@@ -75,6 +81,8 @@ pub(crate) fn dialog(
             Dialog::Theirs { path } => theirs(ui, path, actions),
             Dialog::Offers { offers: lines } => offers(ui, lines, look, actions),
             Dialog::Unsaved { next } => unsaved(ui, next, actions),
+            Dialog::ExportTraces(form) => export_dialog(ui, form, look, actions),
+            Dialog::RunName(asked) => name_dialog(ui, asked, look, actions),
             Dialog::Keys => about::keys(ui, look),
             Dialog::About => about::about(ui, look),
             Dialog::Problem { title, text } => {

@@ -255,7 +255,7 @@ impl Document {
     }
 
     /// Another circuit in place of this one, as one step.
-    fn replace(&mut self, scenario: Scenario, name: &str) {
+    pub(crate) fn replace(&mut self, scenario: Scenario, name: &str) {
         self.finish_gesture();
         let before = std::mem::replace(&mut self.scenario, scenario);
         if before != self.scenario {

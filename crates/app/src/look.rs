@@ -3,6 +3,7 @@
 
 use egui::{Color32, CornerRadius, FontFamily, FontId, Margin, Stroke, TextStyle, Visuals, vec2};
 use helmsplit_study::Status;
+use helmsplit_view::style::{KEPT_OPACITY, Meaning};
 use helmsplit_view::{BuiltInTheme, Colour, Theme, ViewError, Wash};
 use serde::Deserialize;
 
@@ -139,6 +140,22 @@ impl Look {
             Status::Fail => colours.fail,
             Status::NeedsMap | Status::NotApplicable(_) => colours.open,
         })
+    }
+
+    /// Behind traces.
+    pub(crate) fn ground(&self) -> Color32 {
+        egui_colour(self.theme.background)
+    }
+
+    /// Text upon the accent.
+    pub(crate) fn on_accent(&self) -> Color32 {
+        egui_colour(self.theme.text.on_accent)
+    }
+
+    /// The lines of a kept run.
+    pub(crate) fn kept(&self, meaning: Meaning) -> Color32 {
+        let colour = self.theme.series_colour(meaning);
+        egui_colour(colour.mixed(self.theme.background, 1.0 - KEPT_OPACITY))
     }
 
     /// Hands the look to egui.

@@ -11,8 +11,10 @@ use crate::action::{Action, Filing};
 use crate::dialogs::Dialog;
 use crate::document::Document;
 use crate::drawing::Export;
+use crate::export::{COPY_TABLE, COPY_VALUES, ExportKind};
 use crate::files::RecentFile;
 use crate::files::ask_path::{AskPath, FileKind};
+use crate::kept::{KeptAction, KeptRuns, runs_menu};
 use crate::look::Look;
 use crate::settings::{Appearance, SCALES, Settings, units_name};
 
@@ -24,6 +26,7 @@ const UNDO: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Z)
 const REDO: KeyboardShortcut = KeyboardShortcut::new(SHIFT_COMMAND, Key::Z);
 const REDO_TOO: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Y);
 const QUIT: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Q);
+pub(crate) const KEEP: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::K);
 const HELP: KeyboardShortcut = KeyboardShortcut::new(Modifiers::NONE, Key::F1);
 
 /// Presets with the names of their circuits.
@@ -38,7 +41,7 @@ static NAMED_PRESETS: LazyLock<Vec<(&'static Preset, String)>> = LazyLock::new(|
 /// Takes the shortcuts that were pressed.
 pub(crate) fn shortcuts(context: &Context, document: &Document, actions: &mut Vec<Action>) {
     // The longer ones first: Ctrl+Z also matches Ctrl+Shift+Z.
-    let table: [(KeyboardShortcut, Action); 8] = [
+    let table: [(KeyboardShortcut, Action); 9] = [
         (SAVE_AS, save_as(document)),
         (REDO, Action::Redo),
         (REDO_TOO, Action::Redo),
@@ -46,6 +49,7 @@ pub(crate) fn shortcuts(context: &Context, document: &Document, actions: &mut Ve
         (SAVE, Action::Save),
         (OPEN, open()),
         (QUIT, Action::Quit),
+        (KEEP, Action::Kept(KeptAction::AskToKeep)),
         (HELP, Action::Show(Dialog::Keys)),
     ];
     for (shortcut, action) in table {
@@ -97,15 +101,17 @@ pub(crate) fn menu_bar(
     document: &Document,
     (recent, offers): (&[RecentFile], usize),
     settings: &Settings,
+    runs: &Runs<'_>,
     look: &Look,
     actions: &mut Vec<Action>,
 ) {
     MenuBar::new().ui(ui, |ui| {
         ui.menu_button("File", |ui| {
-            file_menu(ui, document, (recent, offers), actions);
+            file_menu(ui, document, (recent, offers), runs.solved, actions);
         });
         ui.menu_button("Edit", |ui| edit_menu(ui, document, actions));
         ui.menu_button("View", |ui| view_menu(ui, settings, actions));
+        ui.menu_button("Runs", |ui| runs_menu(ui, runs.kept, runs.solved, actions));
         ui.menu_button("Help", |ui| {
             item(ui, "Keys and gestures", Some(HELP), actions, || {
                 Action::Show(Dialog::Keys)
@@ -128,7 +134,15 @@ pub(crate) fn menu_bar(
     });
 }
 
-fn item(
+/// What there is to keep, to compare and to export.
+pub(crate) struct Runs<'a> {
+    pub(crate) kept: &'a KeptRuns,
+    /// Whether there is a solved run.
+    pub(crate) solved: bool,
+}
+
+/// An entry of a menu.
+pub(crate) fn item(
     ui: &mut Ui,
     text: &str,
     shortcut: Option<KeyboardShortcut>,
@@ -149,6 +163,7 @@ fn file_menu(
     ui: &mut Ui,
     document: &Document,
     (recent, offers): (&[RecentFile], usize),
+    solved: bool,
     actions: &mut Vec<Action>,
 ) {
     ui.set_min_width(200.0);
@@ -176,6 +191,8 @@ fn file_menu(
             let text = format!("{}...", export.name());
             item(ui, &text, None, actions, || write_drawing(document, export));
         }
+        ui.separator();
+        ui.add_enabled_ui(solved, |ui| export_menu(ui, actions));
     });
     ui.separator();
     item(ui, "Quit", Some(QUIT), actions, || Action::Quit);
@@ -195,6 +212,16 @@ fn recent_menu(ui: &mut Ui, recent: &[RecentFile], actions: &mut Vec<Action>) {
     item(ui, "Empty this list", None, actions, || {
         Action::Filing(Filing::ForgetAllRecent)
     });
+}
+
+fn export_menu(ui: &mut Ui, actions: &mut Vec<Action>) {
+    ui.set_min_width(200.0);
+    for kind in ExportKind::ALL {
+        item(ui, kind.item(), None, actions, || Action::AskExport(kind));
+    }
+    ui.separator();
+    item(ui, COPY_VALUES, None, actions, || Action::CopyValues);
+    item(ui, COPY_TABLE, None, actions, || Action::CopyTable);
 }
 
 fn edit_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {

@@ -1,18 +1,22 @@
 //! The response page: the drawing and the card of a part on the left, traces on the right, evidence on demand.
 
-use egui::{CentralPanel, Frame, Margin, Panel, RichText, Sense, Ui, UiBuilder};
+use egui::containers::menu::{MenuButton, MenuConfig};
+use egui::{
+    CentralPanel, Frame, Margin, Panel, PopupCloseBehavior, RichText, Sense, Ui, UiBuilder,
+};
 use helmsplit_study::{Check, CheckId};
 
 use crate::action::Action;
 use crate::card::{card, parts_row};
 use crate::drawing::{Drawable, DrawingState, Source, drawings};
 use crate::evidence::evidence;
+use crate::kept::{KeptAction, strip};
 use crate::look::SMALL;
 use crate::manoeuvre;
 use crate::parts::Part;
 use crate::quantity_field::{FieldContext, FieldStates};
 use crate::text::on_screen;
-use crate::traces::{Shown, TraceView, traces};
+use crate::traces::{Shown, TraceView, traces, traces_menu};
 
 /// Narrowest pane of the drawing, and what is left to the traces, points.
 const DRAWING_WIDTH: f32 = 340.0;
@@ -86,12 +90,15 @@ pub(crate) fn response_page(
         .inner_margin(Margin::symmetric(10, 6));
     CentralPanel::default().frame(frame).show(ui, |ui| {
         let foot = manoeuvre::reserve(ui, &states.lists);
-        toolbar(ui, page, view);
+        toolbar(ui, page, view, actions);
         if let Some(trouble) = page.trouble {
             ui.label(RichText::new(on_screen(trouble)).color(look.error()));
         }
         match &page.shown {
-            Some(shown) => traces(ui, shown, view),
+            Some(shown) => {
+                strip(ui, shown.kept, Some(shown.figure), look, actions);
+                traces(ui, shown, view, actions);
+            }
             None if page.trouble.is_none() => {
                 ui.weak("The circuit is being solved.");
             }
@@ -135,12 +142,12 @@ fn left_pane(
     card(ui, page.selected, &page.fields, states, actions);
 }
 
-/// What the page answers, and zoom.
-fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView) {
+/// What the page answers, what can be kept, zoom and panels.
+fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView, actions: &mut Vec<Action>) {
     let look = page.fields.look;
     ui.horizontal(|ui| {
         ui.label(RichText::new("Response").strong());
-        let room = ui.available_width() > 620.0;
+        let room = ui.available_width() > 800.0;
         if room {
             let question = "What the circuit does over the manoeuvre.";
             ui.label(RichText::new(question).color(look.quiet()));
@@ -150,20 +157,16 @@ fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView) {
             let Some(whole) = shown.figure.time_range() else {
                 return;
             };
-            ui.menu_button("Traces", |ui| {
-                for panel in &shown.figure.panels {
-                    let mut on = view.shows(&panel.label);
-                    if ui.checkbox(&mut on, &panel.label).changed() {
-                        view.set_shown(&panel.label, on);
-                    }
-                }
-                ui.separator();
-                ui.checkbox(&mut view.follow, "Value axes follow the zoom");
+            let stays = MenuConfig::new().close_behavior(PopupCloseBehavior::CloseOnClickOutside);
+            MenuButton::new("Traces").config(stays).ui(ui, |ui| {
+                traces_menu(ui, shown.figure, view);
                 for note in &shown.figure.notes {
                     let text = RichText::new(on_screen(note)).size(SMALL);
                     ui.label(text.color(look.quiet()));
                 }
             });
+            ui.toggle_value(&mut view.table, "Table")
+                .on_hover_text("The table of readings: values, differences, kept runs.");
             ui.add_enabled_ui(!view.is_whole(), |ui| {
                 if ui.button("Whole run").clicked() {
                     view.show_whole();
@@ -174,6 +177,13 @@ fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView) {
                     view.scale(factor, view.cursor, whole);
                 }
             }
+            ui.add_enabled_ui(!shown.kept.is_full(), |ui| {
+                let keep = ui.button("Keep run...");
+                let keep = keep.on_disabled_hover_text("Five runs are kept: drop one first.");
+                if keep.clicked() {
+                    actions.push(Action::Kept(KeptAction::AskToKeep));
+                }
+            });
         });
     });
 }

@@ -15,6 +15,8 @@ pub(crate) struct StatusLine<'a> {
     /// Time reached by a solve that runs, and the end of the run, s.
     pub(crate) progress: Option<(f64, f64)>,
     pub(crate) document: &'a Document,
+    /// The kept run that is compared with.
+    pub(crate) compared: Option<&'a str>,
     pub(crate) notice: &'a str,
     pub(crate) look: &'a Look,
 }
@@ -46,6 +48,9 @@ pub(crate) fn status_line(ui: &mut Ui, status: &StatusLine<'_>, actions: &mut Ve
                 "Energy audit {}",
                 share(audit.energy.relative)
             )));
+        }
+        if let Some(name) = status.compared {
+            ui.label(small(format!("Compared with \"{name}\"")));
         }
         ui.with_layout(egui::Layout::right_to_left(egui::Align::Center), |ui| {
             let state = if status.document.is_edited() {

@@ -73,6 +73,21 @@ impl Colour {
         (a.max(b) + 0.05) / (a.min(b) + 0.05)
     }
 
+    /// This colour with `share` (0 to 1) of another one in it, mixed channel by channel.
+    #[must_use]
+    pub fn mixed(self, other: Self, share: f64) -> Self {
+        let share = share.clamp(0.0, 1.0);
+        let mix = |a: u8, b: u8| {
+            let value = f64::from(a) + (f64::from(b) - f64::from(a)) * share;
+            value.round() as u8
+        };
+        Self {
+            red: mix(self.red, other.red),
+            green: mix(self.green, other.green),
+            blue: mix(self.blue, other.blue),
+        }
+    }
+
     fn luminance(self) -> f64 {
         let linear = |channel: u8| {
             let share = f64::from(channel) / 255.0;
@@ -101,6 +116,19 @@ mod tests {
             (white.contrast(white) - 1.0).abs() < 1e-12,
             "no contrast is 1"
         );
+    }
+
+    #[test]
+    fn mixing_goes_from_one_colour_to_the_other() {
+        let [black, white] = ["#000000", "#ffffff"].map(|text| text.parse::<Colour>().unwrap());
+        for (share, mixed) in [
+            (0.0, "#000000"),
+            (0.2, "#333333"),
+            (1.0, "#ffffff"),
+            (7.0, "#ffffff"),
+        ] {
+            assert_eq!(black.mixed(white, share).to_string(), mixed, "{share}");
+        }
     }
 
     #[test]

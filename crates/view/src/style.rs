@@ -89,6 +89,30 @@ impl Dash {
     }
 }
 
+/// How many kept runs can be told apart.
+pub const MOST_KEPT: usize = 5;
+
+/// Lengths of line and gap in turn, px, of the lines of a kept run: one for each place.
+const KEPT_PATTERNS: [&[f64]; MOST_KEPT] = [
+    &[3.0, 3.0],
+    &[9.0, 4.0],
+    &[9.0, 3.0, 2.0, 3.0],
+    &[1.2, 3.6],
+    &[9.0, 3.0, 2.0, 3.0, 2.0, 3.0],
+];
+
+/// How pale the lines of kept runs are: this much of them covers.
+pub const KEPT_OPACITY: f64 = 0.62;
+
+/// How wide the lines of kept runs are against those of the run itself.
+pub const KEPT_WIDTH: f64 = 0.7;
+
+/// The pattern of the lines of the kept run at `place`, from 0; places repeat beyond the last.
+#[must_use]
+pub fn kept_pattern(place: usize) -> &'static [f64] {
+    KEPT_PATTERNS[place % MOST_KEPT]
+}
+
 /// A shaded area.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Serialize, Deserialize)]
 pub enum Fill {

@@ -4,7 +4,6 @@ use std::path::Path;
 
 use egui::{Context, ViewportCommand};
 use helmsplit_scenario::write::save_atomically;
-use helmsplit_study::CheckId;
 use helmsplit_view::Moment;
 use helmsplit_view::diagram::DrawingOptions;
 use helmsplit_view::figures::solved_figure;
@@ -15,7 +14,7 @@ use crate::command::{Command, Stage, Target};
 use crate::dialogs::Dialog;
 use crate::document::Document;
 use crate::drawing::{self, Export};
-use crate::traces::TraceView;
+use crate::traces::Readings;
 use crate::worker::{Failure, Quality};
 
 impl HelmsplitApp {
@@ -54,6 +53,7 @@ impl HelmsplitApp {
                     self.figure = solved_figure(&answer.scenario, &answer.solved, units);
                     self.generation += 1;
                 }
+                self.kept.convert(units);
             }
             Action::Appearance(appearance) => self.settings.appearance = appearance,
             Action::Scale(scale) => self.settings.scale = scale,
@@ -62,6 +62,12 @@ impl HelmsplitApp {
             Action::Select(part) => self.selected = part,
             Action::Evidence(id) => self.open_evidence(id),
             Action::CloseEvidence => self.evidence = None,
+            Action::Kept(action) => self.act_on_kept(action),
+            Action::AskExport(kind) => self.ask_export(context, kind),
+            Action::AskExportFile(form) => self.ask_export_file(context, form),
+            Action::ExportTraces(kind, path) => self.export_traces(kind, &path),
+            Action::CopyValues => self.copy(context, Readings::values_text),
+            Action::CopyTable => self.copy(context, Readings::table_text),
         }
     }
 
@@ -142,7 +148,7 @@ impl HelmsplitApp {
         self.document = document;
         self.new_document();
         self.fields.clear();
-        self.view = TraceView::default();
+        self.view.begin_anew();
         self.drawing.stop();
         self.evidence = None;
         self.failure = None;
@@ -183,15 +189,6 @@ impl HelmsplitApp {
             Err(error) => {
                 self.dialog = Some(Dialog::problem("The drawing was not written", error));
             }
-        }
-    }
-
-    fn open_evidence(&mut self, id: CheckId) {
-        self.evidence = Some(id);
-        let check = self.checks().iter().find(|check| check.id == id);
-        let time = check.and_then(|check| check.evidence.as_ref()?.time);
-        if let (Some(time), Some(whole)) = (time, self.figure.time_range()) {
-            self.view.jump(time, whole);
         }
     }
 }

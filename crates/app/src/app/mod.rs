@@ -1,7 +1,10 @@
 //! The app: owns the circuit, the solver and what is in view; everything else draws and asks.
 
 mod acting;
+mod exporting;
 mod filing;
+mod keeping;
+mod reading;
 mod safety;
 
 use std::sync::Arc;
@@ -19,9 +22,11 @@ use crate::dialogs::{Dialog, dialog};
 use crate::document::Document;
 use crate::drawing::{Drawable, DrawingState};
 use crate::error::AppError;
+use crate::export::ExportForm;
 use crate::files::{DiskNews, Files, Home, Kept, WindowPlace};
+use crate::kept::KeptRuns;
 use crate::look::Look;
-use crate::menu;
+use crate::menu::{self, Runs};
 use crate::parts::{PARTS, Part};
 use crate::quantity_field::{FieldContext, FieldStates};
 use crate::response_page::{Page, response_page};
@@ -51,6 +56,9 @@ pub struct HelmsplitApp {
     drawing: DrawingState,
     /// The circuit of a revision, drawn while there is no run; `None` if it cannot be made.
     draft: Option<(u64, Option<Circuit>)>,
+    kept: KeptRuns,
+    /// How the last export looked.
+    export_form: Option<ExportForm>,
     fields: FieldStates,
     selected: Part,
     evidence: Option<CheckId>,
@@ -119,6 +127,8 @@ impl HelmsplitApp {
             view: TraceView::default(),
             drawing: DrawingState::default(),
             draft: None,
+            kept: KeptRuns::default(),
+            export_form: None,
             fields: FieldStates::default(),
             selected: PARTS[3],
             evidence: None,
@@ -142,51 +152,6 @@ impl HelmsplitApp {
         app.show_offers();
         app.request(Quality::Final);
         Ok(app)
-    }
-
-    /// The circuit being edited.
-    #[must_use]
-    pub fn document(&self) -> &Document {
-        &self.document
-    }
-
-    /// The title of the window.
-    #[must_use]
-    pub fn title(&self) -> &str {
-        &self.title
-    }
-
-    /// The last good result.
-    #[must_use]
-    pub fn answer(&self) -> Option<&Answer> {
-        self.answer.as_deref()
-    }
-
-    /// Whether the last good result is that of the present circuit, at full accuracy.
-    #[must_use]
-    pub fn is_up_to_date(&self) -> bool {
-        let fits = |answer: &Arc<Answer>| {
-            answer.revision == self.document.revision() && answer.quality == Quality::Final
-        };
-        self.answer.as_ref().is_some_and(fits) && !self.worker.is_busy()
-    }
-
-    /// Why the present circuit has no result, if that is so.
-    #[must_use]
-    pub fn failure(&self) -> Option<&Failure> {
-        self.failure.as_ref()
-    }
-
-    /// The moment of the cursor, s.
-    #[must_use]
-    pub fn cursor(&self) -> f64 {
-        self.view.cursor
-    }
-
-    /// The figure being shown.
-    #[must_use]
-    pub fn figure(&self) -> &Figure {
-        &self.figure
     }
 
     fn checks(&self) -> &[Check] {
@@ -314,14 +279,19 @@ impl HelmsplitApp {
         let checks: &[Check] = answer.as_ref().map_or(&[], |answer| &answer.solved.checks);
         let busy = self.worker.is_busy();
         let end = self.document.scenario().solver().duration;
-        let stale = self.failure.is_some();
         egui::Panel::top("menu").show(ui, |ui| {
-            let (recent, offers) = (self.files.recent(), self.files.offers().len());
+            let runs = Runs {
+                kept: &self.kept,
+                solved: answer.is_some(),
+            };
+            let files = (self.files.recent(), self.files.offers().len());
+            let document = &self.document;
             menu::menu_bar(
                 ui,
-                &self.document,
-                (recent, offers),
+                document,
+                files,
                 &self.settings,
+                &runs,
                 &self.look,
                 actions,
             );
@@ -336,6 +306,7 @@ impl HelmsplitApp {
                 answer: answer.as_deref(),
                 progress: busy.then(|| (self.worker.progress(), end)),
                 document: &self.document,
+                compared: self.compared(),
                 notice: &self.notice,
                 look: &self.look,
             };
@@ -343,6 +314,7 @@ impl HelmsplitApp {
         });
         self.make_draft();
         let solved = answer.as_ref().map(|answer| &answer.solved);
+        let marks = self.marks();
         let page = Page {
             drawn: Drawable::new(self.generation, solved, self.draft.as_ref()),
             fields: FieldContext {
@@ -357,7 +329,9 @@ impl HelmsplitApp {
             shown: answer.as_ref().map(|_| Shown {
                 figure: &self.figure,
                 generation: self.generation,
-                pale: stale,
+                pale: self.failure.is_some(),
+                kept: &self.kept,
+                evidence: marks.as_ref(),
                 look: &self.look,
             }),
             trouble: self.failure.as_ref().map(|failure| failure.reason.as_str()),

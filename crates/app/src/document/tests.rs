@@ -39,6 +39,24 @@ fn a_gesture_is_one_named_step() {
 }
 
 #[test]
+fn another_circuit_is_one_step() {
+    let mut document = document();
+    let before = document.scenario().clone();
+    let other = PRESETS[1].scenario().unwrap();
+    document.apply(&set("3.5 mm"), Stage::Ongoing).unwrap();
+    document.replace(other.clone(), "circuit of the kept run");
+    assert_eq!(*document.scenario(), other, "restored");
+    let name = Some("circuit of the kept run");
+    assert_eq!(document.undo_name(), name, "by its name");
+    let both = document.undo() && document.undo();
+    assert!(both, "the open gesture is a step of its own");
+    assert_eq!(*document.scenario(), before, "back");
+    let revision = document.revision();
+    document.replace(before, "the same");
+    assert_eq!(document.revision(), revision, "the same is no change");
+}
+
+#[test]
 fn refused_values_leave_no_trace() {
     let mut document = document();
     let before = document.scenario().clone();

@@ -7,7 +7,7 @@ use egui::{Pos2, Shape, Stroke};
 const STEEP: f32 = 0.75;
 
 /// The shapes of a line with lengths of line and gap in turn; empty for an unbroken one.
-pub(super) fn dashed(points: &[Pos2], pattern: &[f64], stroke: Stroke) -> Vec<Shape> {
+pub(crate) fn dashed(points: &[Pos2], pattern: &[f64], stroke: Stroke) -> Vec<Shape> {
     if points.len() < 2 {
         return Vec::new();
     }

@@ -1,27 +1,38 @@
 //! What of the traces is in view.
 
-use std::collections::BTreeSet;
-
 use helmsplit_view::plot::Axis;
 
+use super::arrangement::Arrangement;
+use super::curves::Curves;
 use super::drawn::Drawn;
 
 /// Shortest stretch of time that can be zoomed to, as a share of the run.
 const SHORTEST: f64 = 1e-6;
 
-/// Cursor, zoom and hidden panels.
+/// Cursors, zoom, and which panels are shown.
 pub(crate) struct TraceView {
-    /// The moment that all readings are taken at, s.
+    /// Cursor A: the moment that all readings are taken at, s.
     pub(crate) cursor: f64,
+    /// Cursor B, s.
+    pub(crate) second: Option<f64>,
     /// The stretch in view, s; `None` for the whole run.
     zoom: Option<(f64, f64)>,
     /// Whether the value axes follow what is in view.
     pub(crate) follow: bool,
     /// Whether the traces had the focus when they were last drawn.
     pub(crate) focused: bool,
+    /// Whether the table of readings is open.
+    pub(crate) table: bool,
+    /// Panels and lines: which, and in which order.
+    pub(crate) arrangement: Arrangement,
+    /// The panel that the keys move and hide, by its name.
+    pub(crate) picked: Option<String>,
+    /// A panel to bring into view, by its name.
+    pub(crate) reveal: Option<String>,
     /// Where a stretch to zoom to was begun, s.
     pub(crate) selecting: Option<f64>,
-    hidden: BTreeSet<String>,
+    /// Summaries of the lines of a figure, by its generation.
+    pub(super) curves: Option<(u64, Curves)>,
     pub(super) drawn: Option<Drawn>,
 }
 
@@ -29,11 +40,16 @@ impl Default for TraceView {
     fn default() -> Self {
         Self {
             cursor: 0.0,
+            second: None,
             zoom: None,
             follow: true,
             focused: false,
+            table: false,
+            arrangement: Arrangement::default(),
+            picked: None,
+            reveal: None,
             selecting: None,
-            hidden: BTreeSet::new(),
+            curves: None,
             drawn: None,
         }
     }
@@ -111,18 +127,34 @@ impl TraceView {
         }
     }
 
-    /// Whether a panel is shown.
-    pub(crate) fn shows(&self, label: &str) -> bool {
-        !self.hidden.contains(label)
+    /// Puts cursor B to a moment and brings it into view.
+    pub(crate) fn jump_second(&mut self, time: f64, whole: (f64, f64)) {
+        let first = self.cursor;
+        self.jump(time, whole);
+        self.second = Some(self.cursor);
+        self.cursor = first;
     }
 
-    /// Shows or hides a panel.
-    pub(crate) fn set_shown(&mut self, label: &str, shown: bool) {
-        if shown {
-            self.hidden.remove(label);
-        } else {
-            self.hidden.insert(label.to_owned());
+    /// The same view for a picture: what lies over the page for a moment is left out.
+    pub(crate) fn for_picture(&self) -> Self {
+        Self {
+            cursor: self.cursor,
+            second: self.second,
+            zoom: self.zoom,
+            follow: self.follow,
+            arrangement: self.arrangement.clone(),
+            ..Self::default()
         }
+    }
+
+    /// Begins anew for another circuit: the whole run from its start, with panels as arranged.
+    pub(crate) fn begin_anew(&mut self) {
+        *self = Self {
+            follow: self.follow,
+            table: self.table,
+            arrangement: std::mem::take(&mut self.arrangement),
+            ..Self::default()
+        };
     }
 }
 
@@ -156,5 +188,20 @@ mod tests {
         assert!((to - from - 2.0).abs() < 1e-12, "as long as before");
         view.jump(99.0, WHOLE);
         assert!((view.cursor - 10.0).abs() < 1e-12, "within the run");
+    }
+    #[test]
+    fn the_second_cursor_leaves_the_first_where_it_is() {
+        let mut view = TraceView::default();
+        view.jump(2.0, WHOLE);
+        view.jump_second(11.0, WHOLE);
+        assert_eq!(
+            (view.cursor, view.second),
+            (2.0, Some(10.0)),
+            "held in the run"
+        );
+        view.table = true;
+        view.begin_anew();
+        assert_eq!((view.cursor, view.second), (0.0, None), "no cursors left");
+        assert!(view.table, "what the user opened stays open");
     }
 }

@@ -59,6 +59,18 @@ fn screenshots() {
             shoot(&mut rig, "response");
             rig.click_beginning("overshoot ");
             shoot(&mut rig, "evidence");
+            rig.click("Close");
+            rig.keep("as drawn");
+            rig.enter("Fixed orifice diameter", "3.3 mm");
+            rig.solve();
+            rig.keep("fixed orifice 3.3 mm");
+            rig.enter("Fixed orifice diameter", "3.9 mm");
+            rig.solve();
+            rig.click_trace(0.35, egui::Modifiers::NONE);
+            shoot(&mut rig, "kept");
+            rig.click_trace(0.45, egui::Modifiers::SHIFT);
+            rig.press(egui::Modifiers::NONE, egui::Key::T);
+            shoot(&mut rig, "table");
         }
     }
 }

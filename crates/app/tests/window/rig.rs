@@ -152,6 +152,62 @@ impl Rig {
         self.settle();
     }
 
+    /// Presses a key and lets it act.
+    pub(crate) fn press(&mut self, modifiers: Modifiers, key: Key) {
+        self.harness.key_press_modifiers(modifiers, key);
+        self.settle();
+    }
+
+    /// Keeps the present run under a name.
+    pub(crate) fn keep(&mut self, name: &str) {
+        self.press(Modifiers::COMMAND, Key::K);
+        self.enter("Name of the run", name);
+    }
+
+    /// The names of the kept runs.
+    pub(crate) fn kept(&self) -> Vec<&str> {
+        self.app()
+            .kept()
+            .runs()
+            .iter()
+            .map(|run| run.name())
+            .collect()
+    }
+
+    /// Clicks at a share (0 to 1) of the width of the traces.
+    pub(crate) fn click_trace(&mut self, share: f32, modifiers: Modifiers) {
+        let area = self.harness.get_by_label("Traces over time").rect();
+        let at = egui::pos2(area.left() + share * area.width(), area.center().y);
+        self.harness.hover_at(at);
+        self.settle();
+        for pressed in [true, false] {
+            let event = egui::Event::PointerButton {
+                pos: at,
+                button: egui::PointerButton::Primary,
+                pressed,
+                modifiers,
+            };
+            self.harness.event_modifiers(event, modifiers);
+        }
+        self.settle();
+    }
+
+    /// Steps until something is put on the clipboard; gives it.
+    pub(crate) fn copied(&mut self) -> String {
+        for _ in 0..6 {
+            self.harness.step();
+            let commands = &self.harness.output().platform_output.commands;
+            let text = commands.iter().find_map(|command| match command {
+                egui::OutputCommand::CopyText(text) => Some(text.clone()),
+                _ => None,
+            });
+            if let Some(text) = text {
+                return text;
+            }
+        }
+        panic!("nothing was copied");
+    }
+
     /// The value of a parameter as the circuit file writes it.
     pub(crate) fn text_of(&self, path: &str) -> String {
         let id = ParameterId::from_path(path).expect("a parameter");

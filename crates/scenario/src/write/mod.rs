@@ -9,7 +9,7 @@ mod save;
 pub use edit::{Edit, EditError, added_field, replace_values};
 pub use emit::{Entry, Value, emit};
 pub use literal::{is_key, text_literal};
-pub use save::save_atomically;
+pub use save::{save_atomically, save_bytes_atomically};
 
 #[cfg(test)]
 mod tests;

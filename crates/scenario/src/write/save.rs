@@ -17,6 +17,14 @@ use crate::error::FileError;
 /// [`FileError`] when the path is a folder or no plain file, the existing file is read-only, or
 /// the system refuses. The old file is then untouched.
 pub fn save_atomically(path: impl AsRef<Path>, text: &str) -> Result<(), FileError> {
+    save_bytes_atomically(path, text.as_bytes())
+}
+
+/// Writes `bytes` to `path` as [`save_atomically`] writes text.
+///
+/// # Errors
+/// As those of [`save_atomically`].
+pub fn save_bytes_atomically(path: impl AsRef<Path>, bytes: &[u8]) -> Result<(), FileError> {
     let path = path.as_ref();
     let (target, permissions) = target(path)?;
     let refused = |error: io::Error| FileError::from_write(path, error);
@@ -26,7 +34,7 @@ pub fn save_atomically(path: impl AsRef<Path>, text: &str) -> Result<(), FileErr
         .filter(|folder| !folder.as_os_str().is_empty())
         .unwrap_or(Path::new("."));
     let mut file = new_file(folder).map_err(refused)?;
-    file.write_all(text.as_bytes()).map_err(refused)?;
+    file.write_all(bytes).map_err(refused)?;
     if let Some(permissions) = permissions {
         file.as_file()
             .set_permissions(permissions)

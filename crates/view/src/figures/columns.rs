@@ -64,7 +64,11 @@ impl<'a> Columns<'a> {
     /// A line, if the circuit has it.
     pub(super) fn series(&self, label: &str, meaning: Meaning, name: &str) -> Option<Series> {
         let points = self.points(name)?;
-        Some(Series::new(label, meaning, points))
+        let column = Some(name.to_owned());
+        Some(Series {
+            column,
+            ..Series::new(label, meaning, points)
+        })
     }
 
     /// The size of a column without its sign.

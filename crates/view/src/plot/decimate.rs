@@ -20,22 +20,10 @@ pub fn decimate(points: &[[f64; 2]], from: f64, to: f64, columns: usize) -> Vec<
     let points = within(points, from, to);
     let mut drawn = Vec::new();
     let mut column = Column::default();
-    for &point in points {
-        let [time, value] = point;
-        if !(time.is_finite() && value.is_finite()) {
-            column.flush(&mut drawn);
-            // One mark is enough for a gap, none before the first point.
-            if drawn.last().is_some_and(|last| last[1].is_finite()) {
-                drawn.push([time, f64::NAN]);
-            }
-            continue;
-        }
-        let share = (time - from) / (to - from);
-        let place = (share * columns as f64).floor();
-        if column.is_elsewhere(place) {
-            column.flush(&mut drawn);
-        }
-        column.take(place, point);
+    for (index, &point) in points.iter().enumerate() {
+        let share = (point[0] - from) / (to - from);
+        column.begin((share * columns as f64).floor(), &mut drawn);
+        column.take_point(index, point, &mut drawn);
     }
     column.flush(&mut drawn);
     drawn
@@ -43,74 +31,105 @@ pub fn decimate(points: &[[f64; 2]], from: f64, to: f64, columns: usize) -> Vec<
 
 /// The points from the last one before `from` to the first one behind `to`.
 fn within(points: &[[f64; 2]], from: f64, to: f64) -> &[[f64; 2]] {
-    let first = points.iter().position(|point| point[0] >= from);
-    let Some(first) = first else {
+    let first = points.partition_point(|point| point[0] < from);
+    if first == points.len() {
         return &[];
-    };
-    let behind = points[first..].iter().position(|point| point[0] > to);
-    let end = behind.map_or(points.len(), |offset| first + offset + 1);
+    }
+    let behind = first + points[first..].partition_point(|point| point[0] <= to);
+    let end = (behind + 1).min(points.len());
     &points[first.saturating_sub(1)..end]
 }
 
 /// What one pixel column keeps.
 #[derive(Default)]
-struct Column {
+pub(super) struct Column {
     place: f64,
     kept: Option<Kept>,
 }
 
-/// Points of one column, with their order within it.
+/// Points of one column, each with its position in the line.
 struct Kept {
-    count: usize,
-    first: [f64; 2],
+    first: (usize, [f64; 2]),
     least: (usize, [f64; 2]),
     largest: (usize, [f64; 2]),
-    last: [f64; 2],
+    last: (usize, [f64; 2]),
 }
 
 impl Column {
+    /// Goes to a column; what was kept of another one is drawn.
     #[allow(clippy::float_cmp, reason = "both are whole numbers or not numbers")]
-    fn is_elsewhere(&self, place: f64) -> bool {
-        self.place != place
+    pub(super) fn begin(&mut self, place: f64, drawn: &mut Vec<[f64; 2]>) {
+        if self.place != place {
+            self.flush(drawn);
+            self.place = place;
+        }
     }
 
-    fn take(&mut self, place: f64, point: [f64; 2]) {
-        self.place = place;
+    /// Takes one point, which may be a gap.
+    pub(super) fn take_point(&mut self, index: usize, point: [f64; 2], drawn: &mut Vec<[f64; 2]>) {
+        if point[0].is_finite() && point[1].is_finite() {
+            let here = (index, point);
+            self.take(here, here, here, here);
+            return;
+        }
+        self.flush(drawn);
+        // One mark is enough for a gap, none before the first point.
+        if drawn.last().is_some_and(|last| last[1].is_finite()) {
+            drawn.push([point[0], f64::NAN]);
+        }
+    }
+
+    /// Takes points without a gap that follow one another, by the positions of the first, the
+    /// least, the largest and the last of them.
+    pub(super) fn take_block(
+        &mut self,
+        points: &[[f64; 2]],
+        (first, least, largest, last): (usize, usize, usize, usize),
+    ) {
+        let at = |index: usize| (index, points[index]);
+        self.take(at(first), at(least), at(largest), at(last));
+    }
+
+    fn take(
+        &mut self,
+        first: (usize, [f64; 2]),
+        least: (usize, [f64; 2]),
+        largest: (usize, [f64; 2]),
+        last: (usize, [f64; 2]),
+    ) {
         let Some(kept) = &mut self.kept else {
             self.kept = Some(Kept {
-                count: 1,
-                first: point,
-                least: (0, point),
-                largest: (0, point),
-                last: point,
+                first,
+                least,
+                largest,
+                last,
             });
             return;
         };
-        if point[1] < kept.least.1[1] {
-            kept.least = (kept.count, point);
+        if least.1[1] < kept.least.1[1] {
+            kept.least = least;
         }
-        if point[1] > kept.largest.1[1] {
-            kept.largest = (kept.count, point);
+        if largest.1[1] > kept.largest.1[1] {
+            kept.largest = largest;
         }
-        kept.last = point;
-        kept.count += 1;
+        kept.last = last;
     }
 
-    fn flush(&mut self, drawn: &mut Vec<[f64; 2]>) {
+    /// Draws what was kept.
+    pub(super) fn flush(&mut self, drawn: &mut Vec<[f64; 2]>) {
         let Some(kept) = self.kept.take() else {
             return;
         };
-        let last = (kept.count - 1, kept.last);
         let (early, late) = if kept.least.0 <= kept.largest.0 {
             (kept.least, kept.largest)
         } else {
             (kept.largest, kept.least)
         };
         let mut latest = None;
-        for (order, point) in [(0, kept.first), early, late, last] {
-            if latest != Some(order) {
+        for (index, point) in [kept.first, early, late, kept.last] {
+            if latest != Some(index) {
                 drawn.push(point);
-                latest = Some(order);
+                latest = Some(index);
             }
         }
     }

@@ -219,6 +219,43 @@ impl Figure {
     }
 }
 
+impl Figure {
+    /// The line of this figure that shows the same as a line of another figure: by the names and
+    /// the unit of its panel and by its own name. `None` if there is none.
+    #[must_use]
+    pub fn counterpart(&self, panel: &Panel, series: &Series) -> Option<&Series> {
+        let same = |other: &&Panel| other.label == panel.label && other.unit == panel.unit;
+        let panel = self.panels.iter().find(same)?;
+        let mut lines = panel.series.iter().filter(|line| line.kept.is_none());
+        lines.find(|line| line.label == series.label)
+    }
+
+    /// Lays the lines of a kept run behind those that show the same here, each with the number of
+    /// the run behind its name, and says in a note which run that is. `place` counts kept runs from
+    /// 0. Lines that nothing here answers to are left out.
+    pub fn lay_behind(&mut self, kept: &Self, place: usize, name: &str) {
+        let number = place + 1;
+        for panel in &mut self.panels {
+            let line = |series: &Series| {
+                let found = kept.counterpart(panel, series)?;
+                Some(Series {
+                    label: format!("{} ({number})", series.label),
+                    meaning: series.meaning,
+                    dash: series.dash,
+                    column: series.column.clone(),
+                    kept: Some(place),
+                    points: found.points.clone(),
+                })
+            };
+            let own = panel.series.iter().filter(|series| series.kept.is_none());
+            let lines: Vec<Series> = own.filter_map(line).collect();
+            panel.series.extend(lines);
+        }
+        self.notes
+            .push(format!("({number}) is the kept run \"{name}\"."));
+    }
+}
+
 fn pair((low, high): (f64, f64)) -> [f64; 2] {
     [low, high]
 }
@@ -290,6 +327,31 @@ mod tests {
             ..Figure::default()
         };
         assert_eq!(single.time_range(), Some((-0.5, 0.5)), "a moment gets room");
+    }
+
+    #[test]
+    fn kept_runs_lie_behind_what_shows_the_same() {
+        let figure = |values: &[f64], unit: &str| {
+            let mut panel = panel(values);
+            panel.unit = unit.to_owned();
+            Figure {
+                panels: vec![panel],
+                ..Figure::default()
+            }
+        };
+        let mut live = figure(&[1.0, 2.0], "bar");
+        live.lay_behind(&figure(&[3.0, 4.0], "bar"), 0, "as drawn");
+        live.lay_behind(&figure(&[5.0, 6.0], "psi"), 1, "in other units");
+        let lines = &live.panels[0].series;
+        assert_eq!(lines.len(), 2, "one has the same unit: {lines:?}");
+        assert_eq!(lines[1].label, "Inlet (1)", "numbered");
+        assert_eq!(
+            (lines[1].kept, lines[1].points[1][1]),
+            (Some(0), 4.0),
+            "its values"
+        );
+        assert!(live.notes[0].contains("as drawn"), "{:?}", live.notes);
+        assert_ne!(lines[0].pattern(), lines[1].pattern(), "another dash");
     }
 
     #[test]

@@ -2,7 +2,7 @@
 
 use serde::{Deserialize, Serialize};
 
-use crate::style::{Dash, Meaning};
+use crate::style::{Dash, Meaning, kept_pattern};
 
 /// One line: its points, and what it means.
 #[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
@@ -13,6 +13,13 @@ pub struct Series {
     pub meaning: Meaning,
     /// How it is broken.
     pub dash: Dash,
+    /// The short name of the state or signal it shows, if it shows one.
+    #[serde(default)]
+    pub column: Option<String>,
+    /// The place of the kept run it belongs to, from 0: drawn thin and pale, behind the others.
+    /// `None` for a line of the run itself.
+    #[serde(default)]
+    pub kept: Option<usize>,
     /// Time (s) and value (in the panel's unit). Times never decrease. A value that is not finite
     /// leaves a gap.
     pub points: Vec<[f64; 2]>,
@@ -26,6 +33,8 @@ impl Series {
             label: label.into(),
             meaning,
             dash: meaning.dash(),
+            column: None,
+            kept: None,
             points,
         }
     }
@@ -34,6 +43,16 @@ impl Series {
     #[must_use]
     pub fn dashed(self, dash: Dash) -> Self {
         Self { dash, ..self }
+    }
+
+    /// Lengths of line and gap in turn, px: those of its kept run, else those of its dash; empty
+    /// for an unbroken line.
+    #[must_use]
+    pub fn pattern(&self) -> &'static [f64] {
+        match self.kept {
+            Some(place) => kept_pattern(place),
+            None => self.dash.pattern(),
+        }
     }
 
     /// The points that can be drawn.

@@ -2,9 +2,8 @@
 
 use super::SvgOptions;
 use super::end_labels::Naming;
-use super::mark_rows::{PlacedMark, placed_marks, row_count};
 use super::text_width::{bold_width, text_width, wrapped};
-use crate::plot::{Axis, Figure, Panel, superscript};
+use crate::plot::{Axis, Figure, Panel, PlacedMark, placed_marks, row_count, superscript};
 use crate::style::TextSize;
 
 /// Around everything, px.
@@ -44,6 +43,8 @@ const LEAST_PLOT: f64 = 28.0;
 const LEAST_WIDTH: f64 = 320.0;
 /// A name at a line's end that needs more than this share of the sheet goes into a legend.
 const MOST_END_SHARE: f64 = 0.24;
+/// Rows of event names at most.
+const MOST_MARK_ROWS: usize = 4;
 /// Least gutter for the numbers of the value axes, px.
 const LEAST_GUTTER: f64 = 30.0;
 
@@ -132,7 +133,10 @@ impl<'a> Sheet<'a> {
         let right = (width - MARGIN - names).floor();
         let time = range.map(|range| Axis::new(range, (left, right), TIME_SPACING));
         let marks = match &time {
-            Some(time) => placed_marks(&figure.marks, time),
+            Some(time) => {
+                let width = |label: &str| text_width(label, TextSize::Small);
+                placed_marks(&figure.marks, time, MOST_MARK_ROWS, &width)
+            }
             None => Vec::new(),
         };
         let mut y = MARGIN

@@ -6,8 +6,6 @@ mod chart_panel;
 mod describe;
 mod end_labels;
 mod layout;
-mod limits;
-mod mark_rows;
 mod panel;
 mod pen;
 mod scene;

@@ -2,12 +2,11 @@
 
 use super::end_labels::{EndLabel, Naming};
 use super::layout::{LEADER, MARGIN, SAMPLE, SAMPLE_GAP, Sample, Sheet, Slot, TICK_GAP};
-use super::limits::{Frame, placed_names};
 use super::pen::{Anchor, Stroke, Text, centred, outline, rectangle};
 use super::text_width::text_width;
 use super::xml::{Px, Xml};
-use crate::plot::{Axis, Series, Shade, Where, decimate, straighten};
-use crate::style::{Fill, TextSize};
+use crate::plot::{Axis, Frame, Series, Shade, Where, decimate, placed_names, straighten};
+use crate::style::{Fill, KEPT_OPACITY, KEPT_WIDTH, TextSize};
 use crate::theme::Theme;
 
 /// A line may be straightened by this much, px: less than the eye and the rounding tell.
@@ -71,8 +70,11 @@ impl PanelPainter<'_> {
             xml.area(&area, self.theme.wash(shade.fill));
         }
         self.draw_limits(xml, slot, values);
-        // The most important line comes last, on top.
-        for (series, runs) in slot.panel.series.iter().zip(&lines).rev() {
+        // The most important line comes last, on top; kept runs lie behind.
+        let drawn = slot.panel.series.iter().zip(&lines).rev();
+        let (behind, before): (Vec<_>, Vec<_>) =
+            drawn.partition(|(series, _)| series.kept.is_some());
+        for (series, runs) in behind.into_iter().chain(before) {
             self.draw_series(xml, series, runs);
         }
         xml.close();
@@ -167,8 +169,10 @@ impl PanelPainter<'_> {
 
     fn draw_series(&self, xml: &mut Xml, series: &Series, runs: &[Vec<[f64; 2]>]) {
         let mut stroke = self.series_stroke(series);
-        if runs.iter().map(|run| length(run)).sum::<f64>()
-            > DENSE * (self.sheet.right - self.sheet.left)
+        // Only the dash tells kept runs apart.
+        if series.kept.is_none()
+            && runs.iter().map(|run| length(run)).sum::<f64>()
+                > DENSE * (self.sheet.right - self.sheet.left)
         {
             stroke = stroke.dashed(&[]);
         }
@@ -197,9 +201,14 @@ impl PanelPainter<'_> {
 
     fn series_stroke(&self, series: &Series) -> Stroke<'static> {
         let colour = self.theme.series_colour(series.meaning);
-        series
-            .dash
-            .of(Stroke::new(colour, self.theme.strokes.series))
+        let width = self.theme.strokes.series;
+        match series.kept {
+            Some(_) => {
+                let pale = colour.mixed(self.theme.background, 1.0 - KEPT_OPACITY);
+                Stroke::new(pale, width * KEPT_WIDTH).dashed(series.pattern())
+            }
+            None => Stroke::new(colour, width).dashed(series.pattern()),
+        }
     }
 
     /// The outline of an area: along its upper edge and back along its lower one.

@@ -1,6 +1,7 @@
-//! Limits and where their names stand.
+//! Where the names of limits stand.
 
-use crate::plot::{Axis, Limit, Where};
+use super::axis::Axis;
+use super::figure::{Limit, Where};
 
 /// From a limit's line up to its name's baseline, and down to it, px.
 const ABOVE: f64 = 4.0;
@@ -25,15 +26,21 @@ const WANDERING: f64 = 0.2;
 
 /// A rectangle on paper, px.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct Frame {
-    pub(super) left: f64,
-    pub(super) right: f64,
-    pub(super) top: f64,
-    pub(super) bottom: f64,
+pub struct Frame {
+    /// Left edge.
+    pub left: f64,
+    /// Right edge.
+    pub right: f64,
+    /// Upper edge.
+    pub top: f64,
+    /// Lower edge, below the upper one.
+    pub bottom: f64,
 }
 
 impl Frame {
-    fn meets(&self, other: &Self) -> bool {
+    /// Whether the two share more than an edge.
+    #[must_use]
+    pub fn meets(&self, other: &Self) -> bool {
         self.left < other.right
             && other.left < self.right
             && self.top < other.bottom
@@ -42,7 +49,16 @@ impl Frame {
 
     /// Whether the stretch from `a` to `b` runs through (Liang & Barsky 1984, ACM Transactions on
     /// Graphics 3, 1-22).
-    fn is_crossed(&self, a: [f64; 2], b: [f64; 2]) -> bool {
+    #[must_use]
+    pub fn is_crossed(&self, a: [f64; 2], b: [f64; 2]) -> bool {
+        // Most stretches are far away.
+        if a[0].max(b[0]) < self.left
+            || a[0].min(b[0]) > self.right
+            || a[1].max(b[1]) < self.top
+            || a[1].min(b[1]) > self.bottom
+        {
+            return false;
+        }
         let (dx, dy) = (b[0] - a[0], b[1] - a[1]);
         let (mut enters, mut leaves) = (0.0_f64, 1.0_f64);
         for (towards, room) in [
@@ -67,15 +83,20 @@ impl Frame {
 
 /// A limit's name placed.
 #[derive(Debug, Clone, Copy, PartialEq)]
-pub(super) struct PlacedName {
+pub struct PlacedName {
     /// Left end of the baseline, px.
-    pub(super) at: (f64, f64),
-    frame: Frame,
+    pub at: (f64, f64),
+    /// What the letters cover, px.
+    pub frame: Frame,
+    /// How often lines of data run through it.
+    pub crossings: usize,
 }
 
 /// Where the names of limits stand: on their own line, where they cross the fewest lines of data
-/// and no other name. `None` for a limit out of view.
-pub(super) fn placed_names(
+/// and no other name. `widths` are those of the names, `lines` is the data on paper, px. `None` for
+/// a limit out of view.
+#[must_use]
+pub fn placed_names(
     limits: &[Limit],
     widths: &[f64],
     values: &Axis,
@@ -98,7 +119,7 @@ pub(super) fn placed_names(
                     .filter(|pair| name.frame.is_crossed(pair[0], pair[1]))
                     .count();
                 let cost = OVERLAP * overlaps as f64 + crossings as f64 + wandering;
-                (name, cost)
+                (PlacedName { crossings, ..name }, cost)
             })
             .min_by(|a, b| a.1.total_cmp(&b.1));
         placed.push(name.map(|(name, _)| name));
@@ -143,6 +164,7 @@ fn places(y: f64, width: f64, plot: Frame) -> impl Iterator<Item = (PlacedName, 
         let name = PlacedName {
             at: (left, y),
             frame,
+            crossings: 0,
         };
         (name, WANDERING * step as f64)
     })

@@ -1,41 +1,50 @@
 //! Events: which row above the panels holds which name.
 
-use super::text_width::text_width;
-use crate::plot::{Axis, Mark};
-use crate::style::TextSize;
-
-/// Rows of event names at most; in a dense burst the first event of each group is named.
-const MOST_ROWS: usize = 4;
+use super::axis::Axis;
+use super::figure::Mark;
 
 /// Distance of a name from its line, and of a name from the next line, px.
 const BESIDE: f64 = 4.0;
 
 /// An event with its place.
 #[derive(Debug, Clone, PartialEq)]
-pub(super) struct PlacedMark {
+pub struct PlacedMark {
     /// Where its line stands, px.
-    pub(super) x: f64,
+    pub x: f64,
     /// Its row, 0 next to the panels; `None` if its name is left out.
-    pub(super) row: Option<usize>,
+    pub row: Option<usize>,
+    /// When, s.
+    pub time: f64,
     /// Its name.
-    pub(super) label: String,
+    pub label: String,
+    /// Width of its name, px.
+    pub width: f64,
 }
 
 /// Places events by rising time. A name stands to the right of its line, and wherever the line of
-/// a later event would run through it, one row further up.
-pub(super) fn placed_marks(marks: &[Mark], time: &Axis) -> Vec<PlacedMark> {
+/// a later event would run through it, one row further up. There are at most `most_rows` rows: in
+/// a dense burst the first event of each group is named. `width` gives the width of a name, px.
+#[must_use]
+pub fn placed_marks(
+    marks: &[Mark],
+    time: &Axis,
+    most_rows: usize,
+    width: &dyn Fn(&str) -> f64,
+) -> Vec<PlacedMark> {
     let mut placed: Vec<PlacedMark> = marks
         .iter()
         .filter(|mark| time.contains(mark.time))
         .map(|mark| PlacedMark {
             x: time.position(mark.time),
             row: Some(0),
+            time: mark.time,
             label: mark.label.clone(),
+            width: width(&mark.label),
         })
         .collect();
     placed.sort_by(|a, b| a.x.total_cmp(&b.x));
     leave_repetitions_unnamed(&mut placed);
-    while stack(&mut placed) >= MOST_ROWS {
+    while stack(&mut placed) >= most_rows {
         let Some(crowded) = most_crowded(&placed) else {
             break;
         };
@@ -58,7 +67,7 @@ fn leave_repetitions_unnamed(placed: &mut [PlacedMark]) {
 
 /// Where the name of a mark ends, with room before the next line, px.
 fn name_end(mark: &PlacedMark) -> f64 {
-    mark.x + text_width(&mark.label, TextSize::Small) + 2.0 * BESIDE
+    mark.x + mark.width + 2.0 * BESIDE
 }
 
 /// Gives rows to all named marks from right to left; returns the highest row.
@@ -95,7 +104,8 @@ fn most_crowded(placed: &[PlacedMark]) -> Option<usize> {
 }
 
 /// Rows in use.
-pub(super) fn row_count(placed: &[PlacedMark]) -> usize {
+#[must_use]
+pub fn row_count(placed: &[PlacedMark]) -> usize {
     placed
         .iter()
         .filter_map(|mark| mark.row)
@@ -107,6 +117,13 @@ pub(super) fn row_count(placed: &[PlacedMark]) -> usize {
 mod tests {
     use super::*;
 
+    const MOST_ROWS: usize = 4;
+
+    fn rows_of(marks: &[Mark]) -> Vec<PlacedMark> {
+        let time = Axis::new((0.0, 10.0), (60.0, 860.0), 90.0);
+        placed_marks(marks, &time, MOST_ROWS, &|label| label.len() as f64 * 6.0)
+    }
+
     fn place(times: &[f64]) -> Vec<PlacedMark> {
         let marks: Vec<_> = times
             .iter()
@@ -116,7 +133,7 @@ mod tests {
                 label: format!("relief {number} cracks"),
             })
             .collect();
-        placed_marks(&marks, &Axis::new((0.0, 10.0), (60.0, 860.0), 90.0))
+        rows_of(&marks)
     }
 
     #[test]
@@ -151,7 +168,7 @@ mod tests {
             label: "relief cracks".to_owned(),
         };
         let marks = [again(1.0), again(1.3), again(1.6), again(5.0)];
-        let placed = placed_marks(&marks, &Axis::new((0.0, 10.0), (60.0, 860.0), 90.0));
+        let placed = rows_of(&marks);
         let rows: Vec<_> = placed.iter().map(|mark| mark.row).collect();
         assert_eq!(
             rows,
@@ -165,7 +182,7 @@ mod tests {
         let placed = place(&[0.5, 0.9, 1.8, 2.0, 4.0, 4.1, 7.0]);
         for (index, mark) in placed.iter().enumerate() {
             let Some(row) = mark.row else { continue };
-            let end = mark.x + text_width(&mark.label, TextSize::Small);
+            let end = mark.x + mark.width;
             for other in &placed[index + 1..] {
                 let reaches = other.row.is_some_and(|other_row| other_row >= row);
                 assert!(!reaches || other.x > end, "{other:?} crosses {mark:?}");
