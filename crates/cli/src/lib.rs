@@ -43,10 +43,12 @@ pub fn run(
             };
         }
     };
+    let file = arguments.file.clone();
     match commands::dispatch(arguments, open_window) {
         Ok(status) => status,
         Err(failure) => {
             output::complain(&failure);
+            commands::hint_at_command(file.as_deref(), open_window.is_some());
             failure.status()
         }
     }

@@ -57,7 +57,11 @@ fn without_a_display_one_sentence_says_what_to_do() {
 fn a_file_that_does_not_read_is_refused_before_any_window() {
     let home = folder();
     std::fs::write(home.path().join("cut.ron"), "(format: 1, valve: (").expect("written");
-    for (file, part) in [("cut.ron", "cut.ron:1:"), ("none.ron", "no such file")] {
+    for (file, part) in [
+        ("cut.ron", "cut.ron:1:"),
+        ("none.ron", "no such file"),
+        ("chek", "did you mean the command `helmsplit check`?"),
+    ] {
         let done = without_display(home.path(), &[file]);
         assert_eq!(done.status.code(), Some(2), "{file}: {}", err(&done));
         assert!(err(&done).contains(part), "{file}: {}", err(&done));

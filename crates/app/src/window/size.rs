@@ -1,6 +1,6 @@
 //! How large the window is.
 
-use egui::{Vec2, ViewportBuilder, vec2};
+use egui::{IconData, Vec2, ViewportBuilder, vec2};
 use winit::event_loop::ActiveEventLoop;
 
 use crate::files::WindowPlace;
@@ -13,6 +13,8 @@ pub(crate) fn viewport(place: WindowPlace) -> ViewportBuilder {
     ViewportBuilder::default()
         .with_title("Helmsplit")
         .with_app_id("helmsplit")
+        // An empty picture: without one the window library shows its own.
+        .with_icon(IconData::default())
         .with_inner_size(place.size)
         .with_maximized(place.maximized)
         .with_min_inner_size(LEAST_SIZE)

@@ -8,13 +8,16 @@ mod new;
 mod parameters;
 mod run;
 
-use std::path::PathBuf;
+use std::path::{Path, PathBuf};
 
-use helmsplit_scenario::UnitSystem;
 use helmsplit_scenario::presets::PRESETS;
+use helmsplit_scenario::{UnitSystem, nearest};
 
-use crate::args::{Arguments, CircuitArguments, Colours, Command, RowChoice, RunArguments};
+use crate::args::{
+    Arguments, CircuitArguments, Colours, Command, RowChoice, RunArguments, command,
+};
 use crate::exit::{ExitStatus, Failure};
+use crate::output::say;
 use crate::window::{OpenWindow, open};
 
 /// Does what the arguments ask.
@@ -36,6 +39,17 @@ pub(crate) fn dispatch(
         Some(Command::Convert(arguments)) => convert::convert(&arguments),
         Some(Command::Completions { shell }) => completions::completions(shell, has_window),
         Some(Command::Man) => completions::man(has_window),
+    }
+}
+
+/// A mistyped command is taken for a file that is not there.
+pub(crate) fn hint_at_command(file: Option<&Path>, has_window: bool) {
+    let command = command(has_window);
+    let names = command.get_subcommands().map(clap::Command::get_name);
+    if let Some(word) = file.filter(|file| !file.exists()).and_then(Path::to_str)
+        && let Some(near) = nearest(word, names)
+    {
+        say(&format!("did you mean the command `helmsplit {near}`?"));
     }
 }
 
