@@ -8,6 +8,7 @@ use crate::about;
 use crate::action::{Action, Filing};
 use crate::export::{ExportForm, export_dialog};
 use crate::files::ask_path::{PathDialog, path_dialog};
+use crate::find::{Finder, finder};
 use crate::kept::{RunName, name_dialog};
 use crate::look::Look;
 
@@ -30,6 +31,8 @@ pub(crate) enum Dialog {
     ExportTraces(ExportForm),
     /// The name of a run.
     RunName(RunName),
+    /// Find something by a word.
+    Find(Box<Finder>),
     /// The list of keys.
     Keys,
     /// Version, licences, cautions, what is not modelled.
@@ -69,6 +72,10 @@ pub(crate) fn dialog(
     look: &Look,
     actions: &mut Vec<Action>,
 ) {
+    if let Dialog::Find(state) = dialog {
+        finder(context, state, look, actions);
+        return;
+    }
     let response = Modal::new(Id::unique("dialog")).show(context, |ui| {
         ui.set_width(match dialog {
             Dialog::About | Dialog::Keys | Dialog::Problem { .. } | Dialog::AskPath(_) => 620.0,
@@ -83,6 +90,8 @@ pub(crate) fn dialog(
             Dialog::Unsaved { next } => unsaved(ui, next, actions),
             Dialog::ExportTraces(form) => export_dialog(ui, form, look, actions),
             Dialog::RunName(asked) => name_dialog(ui, asked, look, actions),
+            // Drawn above, at a place of its own.
+            Dialog::Find(_) => {}
             Dialog::Keys => about::keys(ui, look),
             Dialog::About => about::about(ui, look),
             Dialog::Problem { title, text } => {

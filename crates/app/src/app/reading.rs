@@ -6,6 +6,7 @@ use helmsplit_view::plot::Figure;
 
 use super::HelmsplitApp;
 use crate::document::Document;
+use crate::settings::Settings;
 use crate::worker::{Answer, Failure, Quality};
 
 impl HelmsplitApp {
@@ -19,6 +20,12 @@ impl HelmsplitApp {
     #[must_use]
     pub fn title(&self) -> &str {
         &self.title
+    }
+
+    /// What the user prefers.
+    #[must_use]
+    pub fn settings(&self) -> &Settings {
+        &self.settings
     }
 
     /// The last good result.
