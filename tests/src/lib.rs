@@ -20,6 +20,7 @@ pub mod document;
 pub mod equilibria;
 pub mod ideal;
 pub mod line_model;
+pub mod linear_points;
 pub mod outcome;
 pub mod plain_circuit;
 pub mod reference;

@@ -7,6 +7,7 @@ use clap::{Args, CommandFactory, FromArgMatches, Parser, Subcommand, ValueEnum};
 use helmsplit_scenario::PRESETS;
 use helmsplit_scenario::UnitSystem;
 use helmsplit_sim::Rows;
+use helmsplit_study::Layer;
 use helmsplit_view::BuiltInTheme;
 
 use crate::window::Renderer;
@@ -74,6 +75,10 @@ pub(crate) enum Command {
     Run(RunArguments),
     /// Solve a circuit and print every check with its evidence; writes nothing
     Check(CheckArguments),
+    /// Compute equilibria over two variables; print a layer, write tables and a chart
+    Map(MapArguments),
+    /// Find the equilibrium of a circuit, the forces on its spool, and its modes
+    Damping(DampingArguments),
     /// Draw the circuit, or its valve in section, as SVG
     Draw(DrawArguments),
     /// Write a commented circuit file from a preset
@@ -115,6 +120,9 @@ pub(crate) struct RunArguments {
     /// Folder for traces, sidecar and figure
     #[arg(short, long, value_name = "FOLDER", default_value = "helmsplit-out")]
     pub(crate) out: PathBuf,
+    /// Compute the operating map too, for the checks that take it
+    #[arg(long)]
+    pub(crate) map: bool,
     /// Write no files
     #[arg(long, conflicts_with = "out")]
     pub(crate) no_files: bool,
@@ -173,6 +181,112 @@ impl Colours {
 pub(crate) struct CheckArguments {
     #[command(flatten)]
     pub(crate) circuit: CircuitArguments,
+    /// Leave out the operating map and the checks that take it
+    #[arg(long)]
+    pub(crate) no_map: bool,
+    /// Print JSON instead of text
+    #[arg(long)]
+    pub(crate) json: bool,
+}
+
+/// Where a circuit is looked at while it stands still.
+#[derive(Debug, Args)]
+pub(crate) struct PointArguments {
+    /// Take the inputs that the manoeuvre has at this time: "3.4 s"
+    #[arg(long, value_name = "TIME")]
+    pub(crate) time: Option<String>,
+    /// Engine speed: "2400 rpm"
+    #[arg(long, value_name = "SPEED")]
+    pub(crate) speed: Option<String>,
+    /// Turn the steering wheel: "90 rpm"; "0 rpm" lets it rest
+    #[arg(long, value_name = "RATE", allow_hyphen_values = true)]
+    pub(crate) wheel: Option<String>,
+    /// Hold the steering at its lock and pull the wheel on: "30 rpm"
+    #[arg(
+        long,
+        value_name = "RATE",
+        conflicts_with = "wheel",
+        allow_hyphen_values = true
+    )]
+    pub(crate) at_lock: Option<String>,
+    /// Pressure behind the bench throttle of the priority port, or load while the wheel turns
+    #[arg(long, value_name = "PRESSURE")]
+    pub(crate) steering_pressure: Option<String>,
+    /// Pressure behind the bench throttle of the excess port
+    #[arg(long, value_name = "PRESSURE")]
+    pub(crate) excess_pressure: Option<String>,
+    /// Command of the excess consumer, -1 to 1
+    #[arg(long, value_name = "COMMAND", allow_hyphen_values = true)]
+    pub(crate) excess_command: Option<String>,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct MapArguments {
+    #[command(flatten)]
+    pub(crate) circuit: CircuitArguments,
+    #[command(flatten)]
+    pub(crate) point: PointArguments,
+    /// Axis to the right: engine-speed, steering-pressure, wheel-rate, excess-pressure,
+    /// excess-command, motor-load, temperature, wear, air, or the path of a parameter; with a
+    /// range as in `wear=1..4`
+    #[arg(long, value_name = "VARIABLE[=FROM..TO]")]
+    pub(crate) x: Option<String>,
+    /// Axis upwards, the same way
+    #[arg(long, value_name = "VARIABLE[=FROM..TO]")]
+    pub(crate) y: Option<String>,
+    /// Grid lines along both axes
+    #[arg(long, value_name = "COUNT", default_value_t = 40)]
+    pub(crate) lines: usize,
+    /// Spread the grid lines evenly instead of where the layers bend
+    #[arg(long)]
+    pub(crate) even: bool,
+    /// Layer to print and draw: priority-flow, priority-error, excess-flow, damping, frequency,
+    /// travel, stroke-reserve, heat, inlet-pressure
+    #[arg(long, value_name = "LAYER", default_value = "damping", value_parser = layer)]
+    pub(crate) layer: Layer,
+    /// Write every layer as a table
+    #[arg(long, value_name = "FILE")]
+    pub(crate) csv: Option<PathBuf>,
+    /// Draw the layer with its contours
+    #[arg(long, value_name = "FILE")]
+    pub(crate) svg: Option<PathBuf>,
+    /// Colours of the chart
+    #[arg(long, value_enum, default_value_t = Colours::Light)]
+    pub(crate) theme: Colours,
+    /// Print JSON instead of text
+    #[arg(long)]
+    pub(crate) json: bool,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct DampingArguments {
+    #[command(flatten)]
+    pub(crate) circuit: CircuitArguments,
+    #[command(flatten)]
+    pub(crate) point: PointArguments,
+    /// Follow the modes while a variable sweeps, and find the borders of hunting on the way:
+    /// `valve.disc_hole_diameter="0.4 mm..1 mm"`; variables as for the axes of a map
+    #[arg(long, value_name = "VARIABLE[=FROM..TO]")]
+    pub(crate) sweep: Option<String>,
+    /// Values of the sweep
+    #[arg(long, value_name = "COUNT", default_value_t = 31, requires = "sweep")]
+    pub(crate) values: usize,
+    /// Frequency response from pump-flow, steering-load, engine-speed or excess-load to a state or
+    /// signal: `pump-flow:p_in`
+    #[arg(long, value_name = "FROM:TO", default_value = "pump-flow:p_in")]
+    pub(crate) response: String,
+    /// Kick the least damped mode in time, without and with dry friction
+    #[arg(long)]
+    pub(crate) kick: bool,
+    /// Write the modes as a table, over the sweep if there is one
+    #[arg(long, value_name = "FILE")]
+    pub(crate) csv: Option<PathBuf>,
+    /// Draw forces, modes, sweep and response
+    #[arg(long, value_name = "FILE")]
+    pub(crate) svg: Option<PathBuf>,
+    /// Colours of the chart
+    #[arg(long, value_enum, default_value_t = Colours::Light)]
+    pub(crate) theme: Colours,
     /// Print JSON instead of text
     #[arg(long)]
     pub(crate) json: bool,
@@ -246,4 +360,11 @@ pub(crate) struct ConvertArguments {
 
 fn unit_system(text: &str) -> Result<UnitSystem, String> {
     UnitSystem::from_name(text).ok_or_else(|| "write metric, us or si".to_owned())
+}
+
+fn layer(text: &str) -> Result<Layer, String> {
+    Layer::from_name(text).ok_or_else(|| {
+        let names: Vec<_> = Layer::ALL.iter().map(|layer| layer.name()).collect();
+        format!("write one of {}", names.join(", "))
+    })
 }

@@ -86,6 +86,8 @@ impl Failure {
                 ExitStatus::Done
             }
             Self::Window(refused) => refused.status,
+            // The circuit is sound, but it does not come to rest or its modes do not come out.
+            Self::Study(StudyError::Equilibrium(_) | StudyError::Modes(_)) => ExitStatus::GaveUp,
             _ => ExitStatus::BadInput,
         }
     }

@@ -3,13 +3,19 @@
 
 mod args;
 mod commands;
+mod damping_json;
+mod damping_text;
 mod exit;
 mod files;
 mod input;
+mod map_json;
+mod map_text;
 mod measure_text;
 mod output;
+mod point;
 mod progress;
 mod report_json;
+mod table_csv;
 mod verdict;
 mod window;
 

@@ -1,11 +1,12 @@
 //! Progress on a terminal, and Ctrl-C.
 
 use std::io::IsTerminal;
-use std::sync::Arc;
+use std::sync::Once;
 use std::sync::atomic::{AtomicBool, Ordering};
 use std::time::Duration;
 
 use helmsplit_sim::Watch;
+use helmsplit_study::{MapNews, MapWatch};
 use indicatif::{ProgressBar, ProgressDrawTarget, ProgressStyle};
 
 use crate::output::say;
@@ -13,23 +14,47 @@ use crate::output::say;
 /// Parts of a second that the bar counts in.
 const TICKS: f64 = 1000.0;
 
+/// Set by Ctrl-C. One flag for the whole program: a handler can be installed once only, and a
+/// command that runs first and maps then must stop in either.
+static CANCEL: AtomicBool = AtomicBool::new(false);
+
+/// The flag that Ctrl-C sets.
+fn cancel_flag() -> &'static AtomicBool {
+    static INSTALLED: Once = Once::new();
+    INSTALLED.call_once(|| {
+        let handler = ctrlc::set_handler(|| CANCEL.store(true, Ordering::Relaxed));
+        if let Err(error) = handler {
+            say(&format!(
+                "warning: Ctrl-C ends the program at once: {error}"
+            ));
+        }
+    });
+    &CANCEL
+}
+
 /// Calls `work` with a watch that shows progress over `duration` (s) where standard error is a
 /// terminal, and that stops on Ctrl-C.
 pub(crate) fn watched<T>(duration: f64, work: impl FnOnce(&mut Watch<'_>) -> T) -> T {
-    let cancel = Arc::new(AtomicBool::new(false));
-    let flag = Arc::clone(&cancel);
-    let handler = ctrlc::set_handler(move || flag.store(true, Ordering::Relaxed));
-    if let Err(error) = handler {
-        say(&format!(
-            "warning: Ctrl-C ends the program at once: {error}"
-        ));
-    }
+    let cancel = cancel_flag();
     let bar = bar(duration);
     let mut report = |time: f64| bar.set_position((time * TICKS).max(0.0) as u64);
-    let mut watch = Watch::none()
-        .with_cancel(&cancel)
-        .with_progress(&mut report);
+    let mut watch = Watch::none().with_cancel(cancel).with_progress(&mut report);
     let result = work(&mut watch);
+    bar.finish_and_clear();
+    result
+}
+
+/// Calls `work` with a watch of a map that shows progress where standard error is a terminal, and
+/// that stops on Ctrl-C.
+pub(crate) fn watched_map<T>(work: impl FnOnce(MapWatch<'_>) -> T) -> T {
+    let cancel = cancel_flag();
+    let bar = bar(1.0);
+    let hear = |news: &MapNews<'_>| {
+        let share = news.done as f64 / news.total.max(1) as f64;
+        bar.set_position((share * TICKS) as u64);
+    };
+    let watch = MapWatch::none().with_cancel(cancel).with_news(&hear);
+    let result = work(watch);
     bar.finish_and_clear();
     result
 }

@@ -118,7 +118,7 @@ fn table(checks: &[Check], units: UnitSystem) -> String {
 }
 
 /// Width of the terminal; of a page where the output is no terminal.
-fn width() -> usize {
+pub(crate) fn width() -> usize {
     terminal_size::terminal_size().map_or(PAGE, |(width, _)| usize::from(width.0).max(NARROWEST))
 }
 

@@ -279,7 +279,7 @@ fn a_failing_check_is_status_1_and_a_met_one_status_0() {
         "--set",
         "limits.pressure_velocity=20 m/s",
     ];
-    let mut arguments = vec!["check", "orchard_carrier"];
+    let mut arguments = vec!["check", "orchard_carrier", "--no-map"];
     arguments.extend(loose);
     let met = helmsplit(home.path(), &arguments);
     assert_eq!(met.status.code(), Some(0), "{}{}", out(&met), err(&met));
@@ -382,4 +382,145 @@ fn completions_and_manual_are_printed() {
         out(&helmsplit(home.path(), &["man"])).contains(".TH"),
         "a manual page"
     );
+}
+
+#[test]
+fn checks_that_take_the_map_are_answered() {
+    let home = folder();
+    let arguments = ["check", "orchard_carrier", SHORT[0], SHORT[1]];
+    let done = helmsplit(home.path(), &arguments);
+    let text = out(&done);
+    assert!(matches!(done.status.code(), Some(0 | 1)), "{}", err(&done));
+    assert!(!text.contains("needs the map"), "{text}");
+    assert!(text.contains("stroke-reserve: "), "{text}");
+    assert!(text.contains("at engine speed = "), "{text}");
+    let mut without = arguments.to_vec();
+    without.push("--no-map");
+    let done = helmsplit(home.path(), &without);
+    assert!(out(&done).contains("needs the map"), "{}", out(&done));
+    let run = [
+        "run",
+        "orchard_carrier",
+        "--no-files",
+        "--map",
+        SHORT[0],
+        SHORT[1],
+    ];
+    let done = helmsplit(home.path(), &run);
+    assert!(!out(&done).contains("needs the map"), "{}", out(&done));
+}
+
+#[test]
+fn a_map_is_printed_and_written() {
+    let home = folder();
+    let mut arguments = vec![
+        "map",
+        "orchard_carrier",
+        "--lines",
+        "6",
+        "--layer",
+        "damping",
+    ];
+    arguments.extend(["--csv", "map.csv", "--svg", "map.svg"]);
+    let done = helmsplit(home.path(), &arguments);
+    assert_eq!(done.status.code(), Some(0), "{}", err(&done));
+    let text = out(&done);
+    for word in [
+        "Least damping ratio",
+        "Stroke in reserve",
+        "Wrote map.csv",
+        "6 x 6 equilibria",
+    ] {
+        assert!(text.contains(word), "{word} is not in {text}");
+    }
+    let table = std::fs::read_to_string(home.path().join("map.csv")).unwrap();
+    let head = table.lines().next().unwrap();
+    assert!(
+        head.starts_with("engine_speed_rpm,steering_pressure_bar,"),
+        "{head}"
+    );
+    assert_eq!(table.lines().count(), 37, "one row a place");
+    let chart = std::fs::read_to_string(home.path().join("map.svg")).unwrap();
+    assert!(chart.starts_with("<svg"), "a chart");
+
+    let axes = [
+        "map",
+        "orchard_carrier",
+        "--lines",
+        "4",
+        "--x",
+        "temperature=20 degC..80 degC",
+    ];
+    let mut arguments = axes.to_vec();
+    arguments.extend(["--y", "valve.disc_hole_diameter=0.4 mm..0.8 mm", "--json"]);
+    let done = helmsplit(home.path(), &arguments);
+    let report: serde_json::Value = serde_json::from_str(&out(&done)).expect("JSON");
+    assert_eq!(report["x"]["unit"], "degC", "{report}");
+    assert_eq!(
+        report["layers"][0]["values"].as_array().unwrap().len(),
+        16,
+        "{report}"
+    );
+}
+
+#[test]
+fn an_equilibrium_is_told_with_forces_modes_and_sweep() {
+    let home = folder();
+    let mut arguments = vec!["damping", "orchard_carrier"];
+    arguments.extend(["--speed", "2400 rpm", "--wheel", "90 rpm"]);
+    arguments.extend([
+        "--sweep",
+        "valve.disc_hole_diameter=0.4 mm..0.9 mm",
+        "--values",
+        "6",
+    ]);
+    arguments.extend(["--svg", "damping.svg", "--csv", "damping.csv"]);
+    let done = helmsplit(home.path(), &arguments);
+    assert_eq!(done.status.code(), Some(0), "{}", err(&done));
+    let text = out(&done);
+    for word in [
+        "Forces on the spool",
+        "dry friction, left out",
+        "Modes",
+        "damping ratio",
+        "Sweep of disc hole diameter",
+        "left out: dry friction of the spool",
+    ] {
+        assert!(text.contains(word), "{word} is not in {text}");
+    }
+    let table = std::fs::read_to_string(home.path().join("damping.csv")).unwrap();
+    assert!(
+        table.starts_with("valve_disc_hole_diameter_mm,mode_1_"),
+        "{table}"
+    );
+    let chart = std::fs::read_to_string(home.path().join("damping.svg")).unwrap();
+    assert!(chart.contains("Forces on the spool"), "bars");
+
+    let json = ["damping", "workshop_bench", "--json"];
+    let done = helmsplit(home.path(), &json);
+    let report: serde_json::Value = serde_json::from_str(&out(&done)).expect("JSON");
+    assert!(report["modes"].as_array().unwrap().len() > 5, "{report}");
+    assert_eq!(report["ripple"].as_array().unwrap().len(), 2, "{report}");
+}
+
+#[test]
+fn bad_points_and_ranges_are_refused_with_a_hint() {
+    let home = folder();
+    let map = ["map", "orchard_carrier"];
+    let damping = ["damping", "orchard_carrier"];
+    for (command, arguments, wanted) in [
+        (map, ["--x", "engin-speed"], "did you mean engine-speed?"),
+        (map, ["--x", "wear=3..1"], "must grow"),
+        (map, ["--x", "wear=1-3"], "FROM..TO"),
+        (map, ["--y", "excess-pressure"], "vary motor-load"),
+        (map, ["--lines", "1"], "2 to 400"),
+        (damping, ["--speed", "20 bar"], "--speed"),
+        (damping, ["--excess-command", "3"], "-1 to 1"),
+        (damping, ["--response", "pump-flow:p_nowhere"], "p_in"),
+        (damping, ["--response", "pump:p_in"], "pump-flow"),
+        (damping, ["--steering-pressure", "20 bar"], "does not turn"),
+    ] {
+        let all = [&command[..], &arguments[..]].concat();
+        refused(home.path(), &all, &[wanted]);
+    }
 }

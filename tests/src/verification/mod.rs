@@ -8,6 +8,7 @@ mod earlier_study;
 mod friction;
 mod jet_force;
 mod land;
+mod linear;
 mod oil;
 mod orifice;
 mod pipe;
@@ -59,6 +60,11 @@ pub const GROUPS: &[Group] = &[
         title: "Lines: friction",
         about: pipe::ABOUT,
         checks: pipe::checks,
+    },
+    Group {
+        title: "Equilibria, modes and responses",
+        about: linear::ABOUT,
+        checks: linear::checks,
     },
     Group {
         title: "Lines: surge",

@@ -1,8 +1,9 @@
-//! Solves a circuit and prints every check with its evidence.
+//! Solves a circuit and prints every check with its evidence, those that take the operating map
+//! among them.
 
 use helmsplit_sim::RunEnd;
 
-use super::run::{solve_watched, status};
+use super::run::{answer_by_map, solve_watched, status};
 use crate::args::CheckArguments;
 use crate::exit::{ExitStatus, Failure};
 use crate::input::load;
@@ -11,9 +12,13 @@ use crate::{report_json, verdict};
 
 pub(super) fn check(arguments: &CheckArguments) -> Result<ExitStatus, Failure> {
     let loaded = load(&arguments.circuit)?;
-    let solved = solve_watched(&loaded)?;
+    let mut solved = solve_watched(&loaded)?;
     if let RunEnd::Cancelled { .. } = solved.run.end {
         say(&solved.run.end.to_string());
+        return Ok(ExitStatus::Cancelled);
+    }
+    if !arguments.no_map && !answer_by_map(&loaded, &mut solved)? {
+        say("cancelled");
         return Ok(ExitStatus::Cancelled);
     }
     let units = arguments.circuit.units;

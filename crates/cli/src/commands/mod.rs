@@ -3,7 +3,9 @@
 mod check;
 mod completions;
 mod convert;
+mod damping;
 mod draw;
+mod map;
 mod new;
 mod parameters;
 mod run;
@@ -16,6 +18,8 @@ use helmsplit_scenario::presets::PRESETS;
 use crate::args::{Arguments, CircuitArguments, Colours, Command, RowChoice, RunArguments};
 use crate::exit::{ExitStatus, Failure};
 use crate::window::{OpenWindow, open};
+
+pub(crate) use damping::Told;
 
 /// Does what the arguments ask.
 pub(crate) fn dispatch(
@@ -30,6 +34,8 @@ pub(crate) fn dispatch(
         },
         Some(Command::Run(arguments)) => run::run(&arguments),
         Some(Command::Check(arguments)) => check::check(&arguments),
+        Some(Command::Map(arguments)) => map::map(&arguments),
+        Some(Command::Damping(arguments)) => damping::damping(&arguments),
         Some(Command::Draw(arguments)) => draw::draw(&arguments),
         Some(Command::New(arguments)) => new::new(&arguments),
         Some(Command::Parameters(arguments)) => parameters::parameters(&arguments),
@@ -49,6 +55,7 @@ fn main_job(file: Option<PathBuf>) -> RunArguments {
             units: UnitSystem::Metric,
         },
         out: PathBuf::from(crate::files::FOLDER),
+        map: false,
         no_files: false,
         rows: RowChoice::Grid,
         theme: Colours::Light,

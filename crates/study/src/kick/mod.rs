@@ -115,14 +115,15 @@ pub fn kick(
         held: &held,
         scales: &scales,
     };
-    let mut swings = Swings::new(&circuit, equilibrium, 1.0 / frequency, options);
+    let mut swings = Swings::new(&circuit, equilibrium, mode, 1.0 / frequency, options);
     let piece = Piece {
         system: &system,
         end: options.cycles as f64 / frequency,
         jump: false,
     };
+    // Low orders damp what they integrate, and the damping is what is asked for.
     let solver = SolverOptions {
-        highest_order: 2,
+        highest_order: 5,
         ..SolverOptions::with_tolerance(options.tolerance)
     };
     let run = integrate(&[piece], 0.0, &start, &solver, &mut swings, watch)?;

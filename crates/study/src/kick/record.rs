@@ -3,7 +3,7 @@
 use helmsplit_model::Circuit;
 use helmsplit_sim::{Flow, GiveUp, Recorder, Step};
 
-use super::verdict::{DIED, outcome};
+use super::verdict::{died, outcome};
 use super::{Kick, KickOptions};
 use crate::equilibrium::Equilibrium;
 use crate::modes::Mode;
@@ -28,6 +28,8 @@ pub(super) struct Swings {
     rest: f64,
     period: f64,
     until_plain: bool,
+    /// Whether nothing stands in the way of a mode that grows.
+    grows: bool,
     /// Number of the next point of the grid.
     next: usize,
     buffer: Vec<f64>,
@@ -42,10 +44,12 @@ impl Swings {
     pub(super) fn new(
         circuit: &Circuit,
         equilibrium: &Equilibrium,
+        mode: &Mode,
         period: f64,
         options: &KickOptions,
     ) -> Self {
         Self {
+            grows: mode.grows() && !options.friction,
             x: circuit.state_index("x"),
             p_in: circuit.state_index("p_in"),
             rest: equilibrium.travel(),
@@ -84,7 +88,8 @@ impl Swings {
             return false;
         };
         let count = self.travel.len();
-        count > FIRST + STEADY_CYCLES && (last < 0.5 * DIED * first || is_steady(&self.travel))
+        count > FIRST + STEADY_CYCLES
+            && (last < 0.5 * died(self.grows) * first || is_steady(&self.travel))
     }
 
     /// The frequency from upward passages through the middle, Hz.
@@ -136,7 +141,7 @@ impl Swings {
     }
 
     pub(super) fn told(self, mode: &Mode, options: &KickOptions, gave_up: bool) -> Kick {
-        let outcome = outcome(&self, gave_up);
+        let outcome = outcome(&self, self.grows, gave_up);
         Kick {
             friction: options.friction,
             predicted_frequency: 1.0 / self.period,

@@ -9,8 +9,18 @@ use super::{Kick, KickOptions, kick};
 use crate::equilibrium::Equilibrium;
 use crate::error::StudyError;
 
-/// Swings that fell below this share of the first have died out.
-pub(super) const DIED: f64 = 0.2;
+/// Swings of a mode that dies out, or that friction may hold, have died out below this share of
+/// the first.
+const DIED: f64 = 0.2;
+
+/// Swings of a mode that grows end in a steady hunt, which may be far smaller than the kick; below
+/// this share of the first they are gone.
+const GONE: f64 = 1e-3;
+
+/// Share of the first swing below which swings have died out.
+pub(super) fn died(grows: bool) -> f64 {
+    if grows { GONE } else { DIED }
+}
 
 /// Swings that rose above this multiple of the first have grown.
 const GREW: f64 = 2.0;
@@ -38,14 +48,14 @@ pub enum KickOutcome {
     GaveUp,
 }
 
-pub(super) fn outcome(swings: &Swings, gave_up: bool) -> KickOutcome {
+pub(super) fn outcome(swings: &Swings, grows: bool, gave_up: bool) -> KickOutcome {
     let Some((&first, &last)) = swings.travel.first().zip(swings.travel.last()) else {
         return KickOutcome::GaveUp;
     };
     let frequency = swings.last_frequency();
     let pressure = swings.inlet_pressure.last().copied();
     match (frequency, pressure) {
-        _ if last < DIED * first => KickOutcome::DiesOut,
+        _ if last < died(grows) * first => KickOutcome::DiesOut,
         (Some(frequency), Some(inlet_pressure)) if is_steady(&swings.travel) => {
             KickOutcome::LimitCycle {
                 travel: 2.0 * last,

@@ -6,8 +6,9 @@ use helmsplit_scenario::Scenario;
 use super::cell::{Cell, SLOW};
 use super::compute::{MapEnd, OperatingMap};
 use crate::check::{Check, CheckId, Evidence, Limit, Measure, Operand, Status};
+use crate::equilibrium::Equilibrium;
 use crate::frequency::LIGHT;
-use crate::operating::Variable;
+use crate::operating::{Frozen, Variable};
 
 const PRACTICE: &str = "equilibria and eigenvalues of the exact Jacobian (docs/model.md, M11), dry \
                         friction left out; limit: common practice, no source";
@@ -241,13 +242,28 @@ fn damping(scenario: &Scenario, places: &[Place<'_>]) -> Check {
             places.len()
         )
     } else {
-        format!("at {frequency:.0} Hz")
+        match mode_at(scenario, place) {
+            Some(who) => format!("{who} at {frequency:.0} Hz"),
+            None => format!("at {frequency:.0} Hz"),
+        }
     };
     let mut check = check.with_note(note);
     if unstable > 0 {
         check.status = Status::Fail;
     }
     check
+}
+
+/// Who swings in the least damped mode that counts at a place.
+fn mode_at(scenario: &Scenario, place: Place<'_>) -> Option<String> {
+    let point = place.map.spec.point_at(scenario, place.x, place.y).ok()?;
+    let frozen = Frozen::new(scenario, &point).ok()?;
+    let rest = Equilibrium::near(frozen, &point, &place.cell.state).ok()?;
+    let modes = rest.modes().ok()?;
+    let slow = modes
+        .oscillations()
+        .find(|mode| mode.frequency().is_some_and(|f| f < SLOW))?;
+    Some(slow.name())
 }
 
 fn stroke_reserve(scenario: &Scenario, places: &[Place<'_>]) -> Check {

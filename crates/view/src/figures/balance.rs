@@ -6,6 +6,7 @@ use helmsplit_scenario::quantity_text::{Digits, text_from_si};
 use helmsplit_study::{Equilibrium, ForceKind};
 
 use crate::chart::{ChartAxis, ChartBar, ChartPanel};
+use crate::plot::MINUS;
 use crate::style::Meaning;
 use crate::unit_text::unit_text;
 
@@ -51,6 +52,7 @@ fn text(kind: ForceKind, si: f64, unit: &helmsplit_scenario::units::Unit) -> Str
     let text = text_from_si(si, unit, Digits::Significant(4));
     match kind {
         ForceKind::Friction => format!("up to {text} either way"),
-        _ => text,
+        // A real minus, as on the axis below.
+        _ => text.replacen('-', &MINUS.to_string(), 1),
     }
 }
