@@ -28,6 +28,10 @@ const KEYS: &[(&str, &str)] = &[
     ("Ctrl+Shift+S", "Save as"),
     ("Ctrl+Z", "Undo"),
     ("Ctrl+Shift+Z, Ctrl+Y", "Redo"),
+    (
+        "Ctrl+F",
+        "Find a parameter, a choice, a verdict, a trace or a command",
+    ),
     ("Ctrl+Q", "Quit"),
     ("F1", "This list"),
     (

@@ -12,6 +12,7 @@ use crate::drawing::Export;
 use crate::files::ask_path::AskPath;
 use crate::parts::Part;
 use crate::settings::Appearance;
+use crate::spot::Spot;
 
 /// One wish.
 #[derive(Debug, Clone)]
@@ -40,6 +41,16 @@ pub(crate) enum Action {
     Scale(u16),
     Show(Dialog),
     CloseDialog,
+    /// Open the finder.
+    Find,
+    /// Open the card of a field, with the field focused and marked.
+    GoTo(Spot),
+    /// Show the panel of the traces that has this name.
+    ShowTrace(String),
+    /// Show the first hints again.
+    FirstSteps,
+    SkipHint,
+    NoMoreHints,
     /// Show the card of a part.
     Select(Part),
     /// Open the evidence of a check and jump to its moment.

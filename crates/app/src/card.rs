@@ -11,6 +11,7 @@ use crate::look::SMALL;
 use crate::manoeuvre::lists;
 use crate::parts::{PARTS, Part};
 use crate::quantity_field::{FieldContext, FieldStates, quantity_field};
+use crate::spot::Spot;
 
 /// Draws the menu of all parts, and beside it those that are not in the drawing.
 pub(crate) fn parts_row(
@@ -73,7 +74,7 @@ pub(crate) fn card(
         .show(ui, |ui| {
             ui.spacing_mut().item_spacing.y = 3.0;
             for choice in part.choices(context.scenario) {
-                choice_menu(ui, choice, context, actions);
+                choice_menu(ui, choice, context, states, actions);
             }
             let rows = part.used(context.scenario);
             for &row in &rows {
@@ -92,10 +93,12 @@ fn choice_menu(
     ui: &mut Ui,
     choice: &'static Choice,
     context: &FieldContext<'_>,
+    states: &mut FieldStates,
     actions: &mut Vec<Action>,
 ) {
     let at = context.scenario.option(choice.id);
-    ui.horizontal(|ui| {
+    let spot = Spot::Choice(choice.id);
+    let line = ui.horizontal(|ui| {
         let height = ui.spacing().interact_size.y;
         let width = (ui.available_width() - 176.0).max(80.0);
         let label = ui
@@ -109,7 +112,7 @@ fn choice_menu(
             )
             .inner
             .on_hover_text(choice.note);
-        ComboBox::from_id_salt(choice.path)
+        let menu = ComboBox::from_id_salt(choice.path)
             .width(160.0)
             .truncate()
             .selected_text(choice.options[usize::from(at)].label)
@@ -127,7 +130,9 @@ fn choice_menu(
             })
             .response
             .labelled_by(label.id);
+        states.lead(ui, spot, &menu);
     });
+    states.mark(ui, spot, line.response.rect, context.look);
 }
 
 /// Findings about the part that belong to none of its fields.

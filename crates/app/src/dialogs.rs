@@ -7,6 +7,7 @@ use egui::{Context, Id, Modal, RichText, ScrollArea, Ui};
 use crate::about;
 use crate::action::{Action, Filing};
 use crate::files::ask_path::{PathDialog, path_dialog};
+use crate::find::{Finder, finder};
 use crate::look::Look;
 
 /// What lies over the window.
@@ -24,6 +25,8 @@ pub(crate) enum Dialog {
     Offers { offers: Vec<OfferLine> },
     /// The circuit is edited and something else would replace it.
     Unsaved { next: Box<Action> },
+    /// Find something by a word.
+    Find(Box<Finder>),
     /// The list of keys.
     Keys,
     /// Version, licences, cautions, what is not modelled.
@@ -63,6 +66,10 @@ pub(crate) fn dialog(
     look: &Look,
     actions: &mut Vec<Action>,
 ) {
+    if let Dialog::Find(state) = dialog {
+        finder(context, state, look, actions);
+        return;
+    }
     let response = Modal::new(Id::unique("dialog")).show(context, |ui| {
         ui.set_width(match dialog {
             Dialog::About | Dialog::Keys | Dialog::Problem { .. } | Dialog::AskPath(_) => 620.0,
@@ -75,6 +82,8 @@ pub(crate) fn dialog(
             Dialog::Theirs { path } => theirs(ui, path, actions),
             Dialog::Offers { offers: lines } => offers(ui, lines, look, actions),
             Dialog::Unsaved { next } => unsaved(ui, next, actions),
+            // Drawn above, at a place of its own.
+            Dialog::Find(_) => {}
             Dialog::Keys => about::keys(ui, look),
             Dialog::About => about::about(ui, look),
             Dialog::Problem { title, text } => {

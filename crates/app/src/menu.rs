@@ -23,11 +23,12 @@ const SAVE_AS: KeyboardShortcut = KeyboardShortcut::new(SHIFT_COMMAND, Key::S);
 const UNDO: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Z);
 const REDO: KeyboardShortcut = KeyboardShortcut::new(SHIFT_COMMAND, Key::Z);
 const REDO_TOO: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Y);
+const FIND: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::F);
 const QUIT: KeyboardShortcut = KeyboardShortcut::new(Modifiers::COMMAND, Key::Q);
 const HELP: KeyboardShortcut = KeyboardShortcut::new(Modifiers::NONE, Key::F1);
 
 /// Presets with the names of their circuits.
-static NAMED_PRESETS: LazyLock<Vec<(&'static Preset, String)>> = LazyLock::new(|| {
+pub(crate) static NAMED_PRESETS: LazyLock<Vec<(&'static Preset, String)>> = LazyLock::new(|| {
     let named = |preset: &'static Preset| {
         let name = preset.scenario().map(|scenario| scenario.name);
         (preset, name.unwrap_or_else(|_| preset.key.to_owned()))
@@ -38,13 +39,14 @@ static NAMED_PRESETS: LazyLock<Vec<(&'static Preset, String)>> = LazyLock::new(|
 /// Takes the shortcuts that were pressed.
 pub(crate) fn shortcuts(context: &Context, document: &Document, actions: &mut Vec<Action>) {
     // The longer ones first: Ctrl+Z also matches Ctrl+Shift+Z.
-    let table: [(KeyboardShortcut, Action); 8] = [
+    let table: [(KeyboardShortcut, Action); 9] = [
         (SAVE_AS, save_as(document)),
         (REDO, Action::Redo),
         (REDO_TOO, Action::Redo),
         (UNDO, Action::Undo),
         (SAVE, Action::Save),
         (OPEN, open()),
+        (FIND, Action::Find),
         (QUIT, Action::Quit),
         (HELP, Action::Show(Dialog::Keys)),
     ];
@@ -55,12 +57,14 @@ pub(crate) fn shortcuts(context: &Context, document: &Document, actions: &mut Ve
     }
 }
 
-fn open() -> Action {
+/// Asks for the path to open.
+pub(crate) fn open() -> Action {
     let ask = AskPath::open("Open a circuit", FileKind::CIRCUIT, Action::Open);
     Action::AskPath(ask)
 }
 
-fn save_as(document: &Document) -> Action {
+/// Asks for the path to save under, as a wish.
+pub(crate) fn save_as(document: &Document) -> Action {
     Action::AskPath(ask_save_as(document))
 }
 
@@ -75,7 +79,7 @@ pub(crate) fn ask_save_as(document: &Document) -> AskPath {
 }
 
 /// Asks for the path to write a drawing under.
-fn write_drawing(document: &Document, export: Export) -> Action {
+pub(crate) fn write_drawing(document: &Document, export: Export) -> Action {
     let name = format!("{}.{}", file_stem(document), export.suffix());
     let path = document.folder().unwrap_or_default().join(name);
     let then: fn(PathBuf) -> Action = match export {
@@ -113,6 +117,7 @@ pub(crate) fn menu_bar(
             item(ui, "About and cautions", None, actions, || {
                 Action::Show(Dialog::About)
             });
+            item(ui, "First steps", None, actions, || Action::FirstSteps);
         });
         ui.add_space(12.0);
         ui.label(RichText::new(&document.scenario().name).strong())
@@ -209,6 +214,8 @@ fn edit_menu(ui: &mut Ui, document: &Document, actions: &mut Vec<Action>) {
             item(ui, &text, Some(shortcut), actions, || action);
         });
     }
+    ui.separator();
+    item(ui, "Find...", Some(FIND), actions, || Action::Find);
 }
 
 fn unit_items(ui: &mut Ui, settings: &Settings, actions: &mut Vec<Action>) {

@@ -1,18 +1,18 @@
 //! One number of the circuit: typed in any unit, dragged, stepped by keys or wheel.
 
-use std::collections::HashMap;
-
 use egui::{Align, CursorIcon, Id, Key, Layout, Modifiers, RichText, Sense, TextEdit, Ui, vec2};
-use helmsplit_model::Quantity;
 use helmsplit_scenario::convert::display_unit;
 use helmsplit_scenario::quantity_text::{Digits, number_from_si, parse};
 use helmsplit_scenario::units::{Unit, all_units};
-use helmsplit_scenario::{Findings, Parameter, ParameterId, Scenario, Severity, UnitSystem};
+use helmsplit_scenario::{Findings, Parameter, Scenario, Severity, UnitSystem};
 
 use crate::action::Action;
 use crate::command::{Command, Stage};
+pub(crate) use crate::field_states::FieldStates;
 use crate::look::{Look, SMALL};
-use crate::manoeuvre::ListStates;
+use crate::quantity_step::step_of;
+use crate::select_all::select_all;
+use crate::spot::Spot;
 use crate::text::{real_minus, unit_label, with_unit};
 
 /// Digits of a number at rest.
@@ -21,52 +21,9 @@ const DIGITS: u32 = 7;
 /// Pointer travel for one step, points.
 const STEP_TRAVEL: f32 = 4.0;
 
-/// Steps across the usual range, about.
-const STEPS: f64 = 100.0;
-
 const TEXT_WIDTH: f32 = 72.0;
 const UNIT_WIDTH: f32 = 54.0;
 const RESET_WIDTH: f32 = 32.0;
-
-/// What all fields share between frames.
-#[derive(Debug, Default)]
-pub(crate) struct FieldStates {
-    /// The text being typed.
-    typing: Option<(ParameterId, String)>,
-    /// Texts that were refused, with the reason; the circuit keeps the last good value.
-    refused: HashMap<ParameterId, (String, String)>,
-    /// The drag under way: the value it began with in the display unit, and the way so far.
-    drag: Option<(ParameterId, f64, f32)>,
-    /// The editors of lists.
-    pub(crate) lists: ListStates,
-}
-
-impl FieldStates {
-    /// The circuit refused `text`.
-    pub(crate) fn refuse(&mut self, id: ParameterId, text: String, reason: String) {
-        self.refused.insert(id, (text, reason));
-    }
-
-    /// The circuit took a value.
-    pub(crate) fn accept(&mut self, id: ParameterId) {
-        self.refused.remove(&id);
-    }
-
-    /// Another circuit.
-    pub(crate) fn clear(&mut self) {
-        let mut lists = std::mem::take(&mut self.lists);
-        lists.clear();
-        *self = Self {
-            lists,
-            ..Self::default()
-        };
-    }
-
-    /// Why the text of a parameter was refused.
-    pub(crate) fn refusal(&self, id: ParameterId) -> Option<&str> {
-        self.refused.get(&id).map(|(_, reason)| reason.as_str())
-    }
-}
 
 /// What a field needs to know.
 pub(crate) struct FieldContext<'a> {
@@ -92,7 +49,7 @@ pub(crate) fn quantity_field(
         value: unit.value_from_si(context.scenario.si(row.id)),
         context,
     };
-    ui.horizontal(|ui| {
+    let line = ui.horizontal(|ui| {
         ui.spacing_mut().item_spacing.x = 4.0;
         let room = ui.available_width() - TEXT_WIDTH - UNIT_WIDTH - RESET_WIDTH - 14.0;
         let label = field.label(ui, room.max(80.0), states, actions);
@@ -100,6 +57,12 @@ pub(crate) fn quantity_field(
         field.unit(ui);
         field.reset(ui, actions);
     });
+    states.mark(
+        ui,
+        Spot::Parameter(row.id),
+        line.response.rect,
+        context.look,
+    );
     field.remarks(ui, states);
 }
 
@@ -182,6 +145,11 @@ impl Field<'_> {
             edit = edit.text_color(self.context.look.error());
         }
         let response = ui.add(edit).labelled_by(label);
+        let spot = Spot::Parameter(id);
+        if states.seeks(spot) && response.has_focus() {
+            select_all(ui, field_id, &text);
+        }
+        states.lead(ui, spot, &response);
         if response.changed() {
             states.typing = Some((id, text.clone()));
         }
@@ -251,8 +219,13 @@ impl Field<'_> {
     }
 
     fn unit(&self, ui: &mut Ui) {
-        let text = RichText::new(unit_label(self.unit)).color(self.context.look.quiet());
         let height = ui.spacing().interact_size.y;
+        let symbol = unit_label(self.unit);
+        if symbol.is_empty() {
+            ui.allocate_exact_size(vec2(UNIT_WIDTH, height), Sense::hover());
+            return;
+        }
+        let text = RichText::new(symbol).color(self.context.look.quiet());
         ui.allocate_ui_with_layout(
             vec2(UNIT_WIDTH, height),
             Layout::left_to_right(Align::Center),
@@ -343,57 +316,5 @@ impl Field<'_> {
             ui.weak(format!("Type any of {}.", same.join(", ")));
         }
         ui.weak("Drag the name, or step with arrow keys, Page keys or the wheel.");
-    }
-}
-
-/// A round step, about a hundredth of the usual range, in the display unit.
-fn step_of(row: &Parameter, unit: &Unit) -> f64 {
-    let span = row
-        .unit()
-        .si_from_difference(row.usual.high - row.usual.low);
-    let raw = (span / unit.si_from_difference(1.0) / STEPS).abs();
-    if row.quantity == Quantity::Count {
-        return 1.0;
-    }
-    if !(raw.is_finite() && raw > 0.0) {
-        return 1.0;
-    }
-    let decade = 10f64.powf(raw.log10().floor());
-    let lead = raw / decade;
-    let round = if lead < 1.5 {
-        1.0
-    } else if lead < 3.5 {
-        2.0
-    } else if lead < 7.5 {
-        5.0
-    } else {
-        10.0
-    };
-    round * decade
-}
-
-#[cfg(test)]
-mod tests {
-    use super::*;
-    use helmsplit_scenario::parameters;
-
-    #[test]
-    fn steps_are_round_and_fit_the_usual_range() {
-        for row in parameters() {
-            for units in UnitSystem::ALL {
-                let unit = display_unit(row, units);
-                let step = step_of(row, unit);
-                let span = row
-                    .unit()
-                    .si_from_difference(row.usual.high - row.usual.low);
-                let count = span / unit.si_from_difference(step);
-                let counted = row.quantity == Quantity::Count;
-                assert!(
-                    counted || (40.0..=200.0).contains(&count),
-                    "{}: {count} steps of {step} {unit}",
-                    row.path
-                );
-            }
-        }
     }
 }

@@ -3,6 +3,8 @@
 use helmsplit_scenario::UnitSystem;
 use serde::{Deserialize, Serialize};
 
+use crate::first_steps::FirstSteps;
+
 /// Light, dark, or whatever the system has.
 #[derive(Debug, Clone, Copy, PartialEq, Eq, Default, Serialize, Deserialize)]
 pub enum Appearance {
@@ -37,6 +39,8 @@ pub struct Settings {
     pub appearance: Appearance,
     /// Scale of everything, per cent.
     pub scale: u16,
+    /// Hints for a new user.
+    pub first_steps: FirstSteps,
 }
 
 impl Default for Settings {
@@ -45,6 +49,7 @@ impl Default for Settings {
             units: UnitSystem::Metric,
             appearance: Appearance::System,
             scale: 100,
+            first_steps: FirstSteps::default(),
         }
     }
 }

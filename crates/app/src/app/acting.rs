@@ -15,12 +15,14 @@ use crate::command::{Command, Stage, Target};
 use crate::dialogs::Dialog;
 use crate::document::Document;
 use crate::drawing::{self, Export};
+use crate::first_steps::FirstSteps;
 use crate::traces::TraceView;
 use crate::worker::{Failure, Quality};
 
 impl HelmsplitApp {
     /// Does what a part of the window asked for.
     pub(super) fn act(&mut self, context: &Context, action: Action) {
+        self.settings.first_steps.follow(&action);
         match action {
             Action::Edit(command, stage) => self.edit(context, &command, stage),
             Action::FinishGesture => self.document.finish_gesture(),
@@ -59,6 +61,12 @@ impl HelmsplitApp {
             Action::Scale(scale) => self.settings.scale = scale,
             Action::Show(dialog) => self.dialog = Some(dialog),
             Action::CloseDialog => self.close_dialog(),
+            Action::Find => self.find(),
+            Action::GoTo(spot) => self.go_to(spot),
+            Action::ShowTrace(panel) => self.view.set_shown(&panel, true),
+            Action::FirstSteps => self.settings.first_steps = FirstSteps::default(),
+            Action::SkipHint => self.settings.first_steps.skip(),
+            Action::NoMoreHints => self.settings.first_steps = FirstSteps::over(),
             Action::Select(part) => self.selected = part,
             Action::Evidence(id) => self.open_evidence(id),
             Action::CloseEvidence => self.evidence = None,

@@ -1,7 +1,11 @@
 //! The app: owns the circuit, the solver and what is in view; everything else draws and asks.
 
 mod acting;
+mod bars;
+mod calming;
+mod draft;
 mod filing;
+mod leading;
 mod safety;
 
 use std::sync::Arc;
@@ -15,6 +19,7 @@ use helmsplit_view::figures::solved_figure;
 use helmsplit_view::plot::Figure;
 
 use crate::action::Action;
+use crate::calm::Lasting;
 use crate::dialogs::{Dialog, dialog};
 use crate::document::Document;
 use crate::drawing::{Drawable, DrawingState};
@@ -43,6 +48,10 @@ pub struct HelmsplitApp {
     /// Counts up with each figure.
     generation: u64,
     failure: Option<Failure>,
+    /// The failure, as far as it is shown.
+    trouble: Lasting,
+    /// The solve that runs, as far as it is shown.
+    solving: Lasting,
     requested: Option<(u64, Quality)>,
     last_edit: f64,
     settings: Settings,
@@ -112,6 +121,8 @@ impl HelmsplitApp {
             figure: Figure::default(),
             generation: 0,
             failure: None,
+            trouble: Lasting::default(),
+            solving: Lasting::default(),
             requested: None,
             last_edit: 0.0,
             settings,
@@ -154,6 +165,12 @@ impl HelmsplitApp {
     #[must_use]
     pub fn title(&self) -> &str {
         &self.title
+    }
+
+    /// What the user prefers.
+    #[must_use]
+    pub fn settings(&self) -> &Settings {
+        &self.settings
     }
 
     /// The last good result.
@@ -298,50 +315,31 @@ impl HelmsplitApp {
         }
     }
 
-    /// Makes the present circuit, as long as there is no run to draw.
-    fn make_draft(&mut self) {
-        let revision = self.document.revision();
-        if self.answer.is_some() {
-            self.draft = None;
-        } else if self.draft.as_ref().is_none_or(|(old, _)| *old != revision) {
-            let circuit = self.document.scenario().circuit().ok();
-            self.draft = Some((revision, circuit));
-        }
-    }
-
     fn draw(&mut self, ui: &mut Ui, actions: &mut Vec<Action>) {
+        self.make_draft();
         let answer = self.answer.clone();
         let checks: &[Check] = answer.as_ref().map_or(&[], |answer| &answer.solved.checks);
-        let busy = self.worker.is_busy();
+        let solving = self.solving.shows();
         let end = self.document.scenario().solver().duration;
-        let stale = self.failure.is_some();
-        egui::Panel::top("menu").show(ui, |ui| {
-            let (recent, offers) = (self.files.recent(), self.files.offers().len());
-            menu::menu_bar(
-                ui,
-                &self.document,
-                (recent, offers),
-                &self.settings,
-                &self.look,
-                actions,
-            );
-        });
+        let failure = self.failure.as_ref().filter(|_| self.trouble.shows());
+        let stale = failure.is_some();
+        self.menu_bar(ui, actions);
         self.disk_bar(ui, actions);
         egui::Panel::top("verdicts").show(ui, |ui| {
             let units = self.settings.units;
             ribbon(ui, checks, self.evidence, units, &self.look, actions);
         });
+        self.hints_bar(ui, actions);
         egui::Panel::bottom("status").show(ui, |ui| {
             let status = StatusLine {
                 answer: answer.as_deref(),
-                progress: busy.then(|| (self.worker.progress(), end)),
+                progress: solving.then(|| (self.worker.progress(), end)),
                 document: &self.document,
                 notice: &self.notice,
                 look: &self.look,
             };
             status_line(ui, &status, actions);
         });
-        self.make_draft();
         let solved = answer.as_ref().map(|answer| &answer.solved);
         let page = Page {
             drawn: Drawable::new(self.generation, solved, self.draft.as_ref()),
@@ -360,7 +358,7 @@ impl HelmsplitApp {
                 pale: stale,
                 look: &self.look,
             }),
-            trouble: self.failure.as_ref().map(|failure| failure.reason.as_str()),
+            trouble: failure.map(|failure| failure.reason.as_str()),
         };
         let views = (&mut self.view, &mut self.drawing);
         response_page(ui, &page, &mut self.fields, views, actions);
@@ -375,6 +373,7 @@ impl HelmsplitApp {
         self.take_news();
         self.follow_settings(&context);
         self.guard_closing(&context);
+        self.calm(&context);
         let mut actions = Vec::new();
         self.follow_files(&context, &mut actions);
         if self.dialog.is_none() {

@@ -105,6 +105,7 @@ mod tests {
                 units: UnitSystem::Us,
                 appearance: Appearance::Dark,
                 scale: 125,
+                ..Settings::default()
             },
             window: WindowPlace {
                 size: [1000.0, 700.0],

@@ -3,14 +3,15 @@
 use std::time::{Duration, Instant};
 
 use egui::accesskit::Role;
-use egui::{Key, Modifiers};
+use egui::{Key, Modifiers, Rect};
 use egui_kittest::Harness;
-use egui_kittest::kittest::Queryable;
-use helmsplit_app::{Appearance, Document, HelmsplitApp, Home, Kept, Settings};
+use egui_kittest::kittest::{NodeT, Queryable};
+use helmsplit_app::{Appearance, Document, FirstSteps, HelmsplitApp, Home, Kept, Settings};
 use helmsplit_scenario::presets::Preset;
 use helmsplit_scenario::{ParameterId, UnitSystem};
 
 use crate::cpu_renderer::CpuRenderer;
+use crate::seen::{SeenNode, nodes};
 
 /// A solve that takes longer than this on any machine is stuck.
 const PATIENCE: Duration = Duration::from_secs(120);
@@ -37,8 +38,11 @@ impl Rig {
             appearance,
             units: UnitSystem::Metric,
             scale,
+            first_steps: FirstSteps::over(),
         };
-        Self::of(size, |context| {
+        // The harness counts in points, whatever the scale.
+        let points = egui::Vec2::from(size) * 100.0 / f32::from(scale);
+        Self::of(points.into(), |context| {
             HelmsplitApp::with_settings(context, document, settings).expect("a window")
         })
     }
@@ -66,6 +70,7 @@ impl Rig {
             .renderer(CpuRenderer::default())
             .build_eframe(move |creation| make(&creation.egui_ctx));
         let mut rig = Self { harness };
+        rig.harness.set_size(size.into());
         rig.solve();
         rig
     }
@@ -150,6 +155,35 @@ impl Rig {
         self.settle();
         self.harness.key_press(Key::Enter);
         self.settle();
+    }
+
+    /// Opens the finder and types into it.
+    pub(crate) fn open_finder(&mut self, text: &str) {
+        self.harness.key_press_modifiers(Modifiers::COMMAND, Key::F);
+        self.settle();
+        self.harness.event(egui::Event::Text(text.to_owned()));
+        self.settle();
+    }
+
+    /// Goes to the best match of a text.
+    pub(crate) fn find(&mut self, text: &str) {
+        self.open_finder(text);
+        self.harness.key_press(Key::Enter);
+        self.settle();
+    }
+
+    /// What has the focus.
+    pub(crate) fn focused(&self) -> Option<SeenNode> {
+        let focused = self.harness.query_by(|node| node.is_focused())?;
+        let seen = nodes(self).into_iter();
+        let rect = focused.rect();
+        seen.filter(|node| node.interactive)
+            .find(|node| node.role == focused.accesskit_node().role() && node.rect == rect)
+    }
+
+    /// The window, points.
+    pub(crate) fn window(&self) -> Rect {
+        self.harness.ctx.content_rect()
     }
 
     /// The value of a parameter as the circuit file writes it.
