@@ -1,15 +1,17 @@
-//! Whole runs: the reference circuits at three tolerances, and a thousand variants of the orchard
-//! carrier on all cores.
+//! Whole runs: the reference circuits at three tolerances, a thousand variants of the orchard
+//! carrier on all cores, and operating maps.
 
 use std::hint::black_box;
 use std::time::{Duration, Instant};
 
 use criterion::{BenchmarkId, Criterion, criterion_group, criterion_main};
+use helmsplit_acceptance::equilibria::preset;
 use helmsplit_acceptance::reference::{NAMES, Reference};
 use helmsplit_model::{Circuit, InputProfiles};
 use helmsplit_scenario::Scenario;
 use helmsplit_scenario::parameter::{valve, valve_edges};
 use helmsplit_sim::{RunSetup, SolverOptions, Start, Watch, run};
+use helmsplit_study::{MapSpec, MapWatch, operating_map};
 use rayon::prelude::*;
 
 fn scenario(name: &'static str) -> Scenario {
@@ -100,5 +102,23 @@ fn variants(criterion: &mut Criterion) {
     group.finish();
 }
 
-criterion_group!(benches, references, variants);
+/// The operating map as the window asks for it: 40 by 40 equilibria with their eigenvalues, on all
+/// cores; at most 3 s on two idle ones.
+fn maps(criterion: &mut Criterion) {
+    let mut group = criterion.benchmark_group("operating map");
+    group.sample_size(10);
+    for name in ["orchard_carrier", "vineyard_sprayer"] {
+        let scenario = preset(name);
+        let spec = MapSpec::usual(&scenario);
+        group.bench_function(BenchmarkId::new("40 x 40", name), |bencher| {
+            bencher.iter(|| {
+                let map = operating_map(&scenario, &spec, MapWatch::none()).expect("a map");
+                black_box(map.failed())
+            });
+        });
+    }
+    group.finish();
+}
+
+criterion_group!(benches, references, variants, maps);
 criterion_main!(benches);

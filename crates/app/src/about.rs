@@ -16,10 +16,22 @@ const CAUTIONS: [&str; 5] = [
     "Never raise a relief setting to hide a fault.",
 ];
 
-/// What the equations leave out.
-const NOT_MODELLED: &str = "Temperature changes along the circuit; wave travel inside a line \
-    segment; eccentric spools; deformation of bodies; the machine beyond one mass; spring and \
-    friction at the steering cylinder.";
+/// What the equations leave out: the list of docs/model.md, shortened.
+const NOT_MODELLED: [&str; 11] = [
+    "Temperature: one for the whole circuit and the whole run; no heating, no cold plug of oil.",
+    "Waves inside a line segment; friction that depends on frequency.",
+    "Air that goes into solution and out of it, foam; what cavitation does to parts.",
+    "Side forces on the spool, its eccentricity, lock and silting; deformation of the body; \
+     clearances that change with pressure.",
+    "Inertia of the oil in holes and chambers of the valve; losses of its passages beside the \
+     restrictions named.",
+    "The reliefs' own mass and spring.",
+    "Engine: torque curve, governor lag, clutch, hydrostatic transmission.",
+    "Machine: linkage geometry, articulation, tyre dynamics, path of the vehicle.",
+    "Driver: the wheel rate is given, and the torque at the wheel is not computed.",
+    "Steering unit: slip past the meter, timing grooves, emergency steering, reaction types.",
+    "Electronics, sensors, load-sensing pumps.",
+];
 
 /// Keys and what they do.
 const KEYS: &[(&str, &str)] = &[
@@ -133,7 +145,16 @@ pub(crate) fn about(ui: &mut Ui, look: &Look) {
         }
         ui.add_space(6.0);
         ui.label(RichText::new("Not modelled").strong());
-        ui.label(NOT_MODELLED);
+        for left_out in NOT_MODELLED {
+            ui.label(left_out);
+        }
+        ui.label("In full, with the limits of each equation: docs/model.md of the source.");
+        ui.add_space(6.0);
+        ui.label(RichText::new("Licences of the libraries").strong());
+        ui.label(
+            "The program is built from open-source libraries under licences that allow it; \
+             docs/libraries.md of the source lists each with its version and licence.",
+        );
     });
 }
 

@@ -43,7 +43,7 @@ pub(super) fn land(
             let text = RichText::new(text).size(SMALL).color(context.look.quiet());
             ui.add_sized(size, egui::Label::new(text));
         };
-        head(PLACE, String::new());
+        head(PLACE, "no.".to_owned());
         head(FIELD, format!("travel in {}", unit_label(travel)));
         head(FIELD, format!("area in {}", unit_label(area)));
     });

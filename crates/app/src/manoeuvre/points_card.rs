@@ -112,7 +112,7 @@ fn heads(ui: &mut Ui, unit: &Unit, context: &FieldContext<'_>) {
             let text = RichText::new(text).size(SMALL).color(context.look.quiet());
             ui.add_sized(size, egui::Label::new(text));
         };
-        head(PLACE, String::new());
+        head(PLACE, "no.".to_owned());
         head(FIELD, format!("time in {}", unit_label(second)));
         let value = match unit_label(unit) {
             symbol if symbol.is_empty() => "value".to_owned(),

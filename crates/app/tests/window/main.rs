@@ -8,6 +8,7 @@ mod exports;
 mod files;
 mod finding;
 mod hints;
+mod keyboard;
 mod kept_runs;
 mod lists;
 mod looks;
