@@ -165,7 +165,7 @@ fn toolbar(ui: &mut Ui, page: &Page<'_>, view: &mut TraceView, actions: &mut Vec
                     ui.label(text.color(look.quiet()));
                 }
             });
-            ui.toggle_value(&mut view.table, "Table")
+            ui.toggle_value(&mut view.table, "Readings")
                 .on_hover_text("The table of readings: values, differences, kept runs.");
             ui.add_enabled_ui(!view.is_whole(), |ui| {
                 if ui.button("Whole run").clicked() {

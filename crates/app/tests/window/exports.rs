@@ -90,8 +90,14 @@ fn a_file_that_cannot_be_written_is_said() {
     let mut rig = Rig::new();
     for entry in ["Traces as SVG...", "Traces as PNG...", "Data as CSV..."] {
         export(&mut rig, entry, &folder.path().join("no such folder/x"));
-        assert!(rig.says("The file was not exported"), "{entry}");
+        assert!(rig.says("There is no folder"), "{entry}");
         assert!(rig.says("no such folder"), "{entry}: which one");
+        rig.click("Cancel");
+        // Longer than any file system takes: the file itself cannot be made.
+        let long = "x".repeat(300);
+        export(&mut rig, entry, &folder.path().join(&long));
+        assert!(rig.says("The file was not exported"), "{entry}");
+        assert!(rig.says(&long), "{entry}: which one");
         rig.click("Close");
     }
     let left = std::fs::read_dir(folder.path()).expect("a folder").count();
