@@ -29,6 +29,10 @@ const WIDEST_AT_FIRST: f32 = 820.0;
 /// Narrowest and widest pane of evidence, points.
 const EVIDENCE_WIDTH: std::ops::RangeInclusive<f32> = 290.0..=520.0;
 
+/// Least width of a window, points, in which evidence stands beside the traces: a narrower one would
+/// leave too little of them.
+const EVIDENCE_BESIDE: f32 = 1500.0;
+
 /// What the page shows.
 pub(crate) struct Page<'a> {
     pub(crate) fields: FieldContext<'a>,
@@ -44,6 +48,14 @@ pub(crate) struct Page<'a> {
     pub(crate) trouble: Option<&'a str>,
 }
 
+impl Page<'_> {
+    /// The check whose evidence is open.
+    fn open_check(&self) -> Option<&Check> {
+        let id = self.evidence?;
+        self.checks.iter().find(|check| check.id == id)
+    }
+}
+
 /// Draws the page.
 pub(crate) fn response_page(
     ui: &mut Ui,
@@ -53,6 +65,7 @@ pub(crate) fn response_page(
     actions: &mut Vec<Action>,
 ) {
     let look = page.fields.look;
+    let narrow = ui.available_width() < EVIDENCE_BESIDE;
     let widest = (ui.available_width() - TRACES_WIDTH).max(DRAWING_WIDTH + 1.0);
     let frame = Frame::NONE
         .fill(ui.visuals().panel_fill)
@@ -69,13 +82,16 @@ pub(crate) fn response_page(
             let room = ui.available_rect_before_wrap();
             let mut inside = ui.new_child(UiBuilder::new().max_rect(room));
             inside.set_clip_rect(room.expand(2.0).intersect(ui.clip_rect()));
-            left_pane(&mut inside, page, states, (view, drawing), actions);
+            left_pane(
+                &mut inside,
+                (page, narrow),
+                states,
+                (view, drawing),
+                actions,
+            );
             ui.allocate_rect(room, Sense::hover());
         });
-    let open = page
-        .evidence
-        .and_then(|id| page.checks.iter().find(|check| check.id == id));
-    if let Some(check) = open {
+    if let (Some(check), false) = (page.open_check(), narrow) {
         Panel::right("evidence")
             .frame(frame)
             .default_size(304.0)
@@ -109,10 +125,10 @@ pub(crate) fn response_page(
     });
 }
 
-/// The drawing, the row of parts, the card.
+/// The drawing, the row of parts, the card; in a narrow window evidence takes the place of the card.
 fn left_pane(
     ui: &mut Ui,
-    page: &Page<'_>,
+    (page, narrow): (&Page<'_>, bool),
     states: &mut FieldStates,
     (view, drawing): (&mut TraceView, &mut DrawingState),
     actions: &mut Vec<Action>,
@@ -139,7 +155,10 @@ fn left_pane(
     }
     parts_row(ui, page.selected, &drawing.undrawn(), &page.fields, actions);
     ui.separator();
-    card(ui, page.selected, &page.fields, states, actions);
+    match page.open_check() {
+        Some(check) if narrow => evidence(ui, check, &page.fields, states, actions),
+        _ => card(ui, page.selected, &page.fields, states, actions),
+    }
 }
 
 /// What the page answers, what can be kept, zoom and panels.

@@ -8,6 +8,7 @@ mod exports;
 mod files;
 mod finding;
 mod hints;
+mod journey;
 mod kept_runs;
 mod keyboard;
 mod lists;

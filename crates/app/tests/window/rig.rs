@@ -7,7 +7,7 @@ use egui::{Key, Modifiers, Rect};
 use egui_kittest::Harness;
 use egui_kittest::kittest::{NodeT, Queryable};
 use helmsplit_app::{Appearance, Document, FirstSteps, HelmsplitApp, Home, Kept, Settings};
-use helmsplit_scenario::presets::Preset;
+use helmsplit_scenario::presets::{PRESETS, Preset};
 use helmsplit_scenario::{ParameterId, UnitSystem};
 
 use crate::cpu_renderer::CpuRenderer;
@@ -44,6 +44,14 @@ impl Rig {
         let points = egui::Vec2::from(size) * 100.0 / f32::from(scale);
         Self::of(points.into(), |context| {
             HelmsplitApp::with_settings(context, document, settings).expect("a window")
+        })
+    }
+
+    /// The orchard carrier, solved, as a new user sees it.
+    pub(crate) fn at_first(size: [f32; 2]) -> Self {
+        let document = Document::from_preset(&PRESETS[0]).expect("presets read");
+        Self::of(size, |context| {
+            HelmsplitApp::with_settings(context, document, Settings::default()).expect("a window")
         })
     }
 
