@@ -5,7 +5,6 @@ use std::sync::atomic::AtomicBool;
 use helmsplit_acceptance::trouble::Tried;
 use helmsplit_scenario::parameter::{main_relief, oil, priority_relief, valve, valve_edges};
 use helmsplit_scenario::{Preset, Scenario};
-use helmsplit_sim::Watch;
 use helmsplit_study::figure::{Ask, Figure};
 use helmsplit_study::influence::{design_parameters, influence};
 use helmsplit_study::mend::{Fault, MendError, mend};
@@ -33,7 +32,7 @@ fn influences_on_the_priority_flow_are_the_exponents_of_the_orifice() -> Tried<(
     let ask = Ask::of(&bench);
     let flow = Figure::parse("q_priority.end", &circuit)?;
     let margin = Figure::parse("p_margin.end", &circuit)?;
-    let drop = ask.figure(&margin, &[], &mut Watch::none())?;
+    let drop = ask.figure(&margin, &[], &StudyWatch::none())?;
     let force = drop * circuit.parts().valve.end_area();
     let share = bench.si(valve::SPRING_PRELOAD) / force;
     // Spring rate, jets and the laminar part of the orifice are left out of the closed form.
@@ -68,7 +67,7 @@ fn solving_for_the_orifice_meets_the_flow_and_the_square_law() -> Tried<()> {
     let circuit = bench.circuit()?;
     let ask = Ask::of(&bench);
     let flow = Figure::parse("q_priority.end", &circuit)?;
-    let now = ask.figure(&flow, &[], &mut Watch::none())?;
+    let now = ask.figure(&flow, &[], &StudyWatch::none())?;
     let target = 0.9 * now;
     let mut question = Question::new(valve_edges::FIXED_ORIFICE_DIAMETER, flow.clone(), target);
     question.from = 3e-3;
@@ -80,7 +79,7 @@ fn solving_for_the_orifice_meets_the_flow_and_the_square_law() -> Tried<()> {
     let root = answer.roots[0];
     assert_eq!(root.kind, RootKind::Crossing, "{root:?}");
     let change = [(question.parameter, root.parameter)];
-    let again = ask.figure(&flow, &change, &mut Watch::none())?;
+    let again = ask.figure(&flow, &change, &StudyWatch::none())?;
     assert!(
         (again / target - 1.0).abs() < 1e-5,
         "{again} against {target}"

@@ -111,6 +111,9 @@ pub(crate) struct SolveForArguments {
     /// Values that the scan looks at
     #[arg(long, value_name = "COUNT", default_value_t = 25)]
     pub(crate) points: usize,
+    /// Take figures at rest at the inputs that the manoeuvre has at this time: "6.5 s"
+    #[arg(long, value_name = "TIME")]
+    pub(crate) at: Option<String>,
     /// List the figures of the circuit
     #[arg(long)]
     pub(crate) figures: bool,
@@ -129,6 +132,9 @@ pub(crate) struct InfluenceArguments {
     /// Parameter to vary; may be repeated; by default every dimension, setting and property
     #[arg(long = "parameter", value_name = "PATH")]
     pub(crate) parameters: Vec<String>,
+    /// Take figures at rest at the inputs that the manoeuvre has at this time: "6.5 s"
+    #[arg(long, value_name = "TIME")]
+    pub(crate) at: Option<String>,
     /// Rows that are shown
     #[arg(long, value_name = "COUNT", default_value_t = 20)]
     pub(crate) most: usize,

@@ -93,7 +93,7 @@ mod tests {
                 "20 %",
             ][..],
             &[orifice, "--figure", "overshot", "--target", "20 %"],
-            &[orifice, "--figure", "damping", "--target", "0.3"],
+            &[orifice, "--figure", "audit", "--target", "0.3"],
             &[orifice, "--figure", "overshoot", "--target", "20 bar"],
             &[
                 orifice,
@@ -135,7 +135,7 @@ mod tests {
             &["size", "frost_pruner", "--spring-drop", "6 mm"],
             &["size", "frost_pruner", "--axle-load", "20 kN"],
             &["mend", "frost_pruner", "--check", "overshot"],
-            &["mend", "frost_pruner", "--check", "regulation"],
+            &["mend", "frost_pruner", "--check", "audit"],
             &[
                 "mend",
                 "frost_pruner",

@@ -5,6 +5,8 @@ use std::sync::atomic::{AtomicBool, AtomicUsize, Ordering};
 use helmsplit_sim::Watch;
 use rayon::prelude::*;
 
+use crate::map::MapWatch;
+
 /// How far a study is.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub struct Progress {
@@ -56,6 +58,14 @@ impl<'a> StudyWatch<'a> {
         match self.cancel {
             Some(flag) => Watch::none().with_cancel(flag),
             None => Watch::none(),
+        }
+    }
+
+    /// A watch for maps inside the study.
+    pub(crate) fn map_watch(&self) -> MapWatch<'a> {
+        match self.cancel {
+            Some(flag) => MapWatch::none().with_cancel(flag),
+            None => MapWatch::none(),
         }
     }
 

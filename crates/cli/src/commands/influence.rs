@@ -5,12 +5,13 @@ use helmsplit_scenario::convert::display_unit;
 use helmsplit_scenario::quantity_text::{Digits, text_from_si};
 use helmsplit_scenario::write::save_atomically;
 use helmsplit_study::Measure;
-use helmsplit_study::figure::{Ask, Figure};
+use helmsplit_study::figure::Figure;
 use helmsplit_study::influence::{
     Influence, InfluenceError, Influences, influence as study, varied_parameters,
 };
 use helmsplit_view::{Column, TextTable, influence_scene, sensitivity_text, svg_from_scene};
 
+use super::solve_for::ask;
 use crate::exit::{ExitStatus, Failure};
 use crate::input::{Loaded, load};
 use crate::measure_text::measure;
@@ -37,7 +38,7 @@ pub(super) fn influence(arguments: &InfluenceArguments) -> Result<ExitStatus, Fa
     if parameters.is_empty() {
         parameters = varied_parameters(scenario);
     }
-    let ask = Ask::of(scenario).from_start(loaded.start.clone());
+    let ask = ask(&loaded, arguments.at.as_deref())?;
     let found = studied(|watch| study(&ask, &figures, &parameters, watch));
     if found.cancelled {
         return Ok(ExitStatus::Cancelled);

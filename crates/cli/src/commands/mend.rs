@@ -3,7 +3,7 @@
 use helmsplit_scenario::convert::display_unit;
 use helmsplit_scenario::quantity_text::{Digits, text_from_si};
 use helmsplit_scenario::{Scenario, UnitSystem, nearest};
-use helmsplit_study::figure::{Ask, RUN_CHECKS};
+use helmsplit_study::figure::{Ask, MAP_CHECKS, RUN_CHECKS};
 use helmsplit_study::influence::design_parameters;
 use helmsplit_study::mend::{Dropped, Fault, MendError, Mending, Proposal, mend as study};
 use helmsplit_study::sizing::{Change, adopt};
@@ -83,23 +83,19 @@ fn fault(arguments: &MendArguments, scenario: &Scenario) -> Result<Fault, Failur
     })
 }
 
-/// The check of that name, as far as a run answers it.
+/// The check of that name.
 fn check_of(name: &str) -> Result<CheckId, Failure> {
-    if let Some(id) = RUN_CHECKS.into_iter().find(|id| id.name() == name.trim()) {
+    let known = || RUN_CHECKS.into_iter().chain(MAP_CHECKS);
+    if let Some(id) = known().find(|id| id.name() == name.trim()) {
         return Ok(id);
     }
-    if CheckId::ALL.iter().any(|id| id.name() == name.trim()) {
-        return Err(Failure::Input(format!(
-            "the check {name} is not answered by a run; a run cannot mend it"
-        )));
-    }
-    let names = RUN_CHECKS.iter().map(|id| id.name());
-    let hint = match nearest(name, names.clone()) {
+    let names = || known().map(CheckId::name);
+    let hint = match nearest(name, names()) {
         Some(near) => format!("did you mean {near}?"),
-        None => format!("checks of a run: {}", names.collect::<Vec<_>>().join(", ")),
+        None => format!("checks: {}", names().collect::<Vec<_>>().join(", ")),
     };
     Err(Failure::Input(format!(
-        "there is no check \"{name}\"; {hint}"
+        "there is no check \"{name}\" of a circuit; {hint}"
     )))
 }
 

@@ -4,9 +4,9 @@ use helmsplit_model::{Circuit, Quantity};
 use helmsplit_scenario::UnitSystem;
 use helmsplit_scenario::convert::display_unit;
 use helmsplit_scenario::quantity_text::{Digits, text_from_si};
-use helmsplit_study::Measure;
-use helmsplit_study::figure::{Ask, RUN_CHECKS, Statistic, trace_columns};
+use helmsplit_study::figure::{Ask, MAP_CHECKS, RUN_CHECKS, Statistic, trace_columns};
 use helmsplit_study::solve_for::{Answer, Question, RootKind, solve_for as answer};
+use helmsplit_study::{Measure, OperatingPoint};
 use helmsplit_view::{Column, TextTable};
 
 use crate::exit::{ExitStatus, Failure};
@@ -30,7 +30,7 @@ pub(super) fn solve_for(arguments: &SolveForArguments) -> Result<ExitStatus, Fai
         return Ok(ExitStatus::Done);
     }
     let question = question(arguments, &loaded, &circuit)?;
-    let ask = Ask::of(&loaded.scenario).from_start(loaded.start.clone());
+    let ask = ask(&loaded, arguments.at.as_deref())?;
     let found = studied(|watch| answer(&ask, &question, watch));
     if found.cancelled {
         return Ok(ExitStatus::Cancelled);
@@ -48,6 +48,17 @@ pub(super) fn solve_for(arguments: &SolveForArguments) -> Result<ExitStatus, Fai
         return Ok(ExitStatus::BadInput);
     }
     Ok(ExitStatus::Done)
+}
+
+/// What figures are asked of: the circuit, and where it is looked at while it rests.
+pub(super) fn ask<'a>(loaded: &'a Loaded, at: Option<&str>) -> Result<Ask<'a>, Failure> {
+    let ask = Ask::of(&loaded.scenario).from_start(loaded.start.clone());
+    let Some(text) = at else {
+        return Ok(ask);
+    };
+    let time = quantity(text, "--at", Quantity::Time)?;
+    let point = OperatingPoint::at(&loaded.scenario, time).map_err(Failure::Findings)?;
+    Ok(ask.at_point(point))
 }
 
 fn question(
@@ -156,12 +167,24 @@ fn report(
 
 /// The figures of a circuit.
 fn listing(circuit: &Circuit) -> String {
-    let mut text = String::from("Checks\n\n");
-    let mut table = TextTable::new(vec![Column::left("figure"), Column::wrapped("what it is")]);
-    for id in RUN_CHECKS {
-        table.push([id.name(), id.label()]);
+    let mut text = String::new();
+    for (heading, checks) in [
+        ("Checks of a run", &RUN_CHECKS[..]),
+        ("Checks of the operating map", &MAP_CHECKS),
+    ] {
+        text.push_str(&format!("{heading}\n\n"));
+        let mut table = TextTable::new(vec![Column::left("figure"), Column::wrapped("what it is")]);
+        for id in checks {
+            table.push([id.name(), id.label()]);
+        }
+        text.push_str(&table.to_text(width()));
+        text.push('\n');
     }
-    text.push_str(&table.to_text(width()));
+    text.push_str(
+        "At rest: rest.damping, the least damping ratio, and rest.NAME for any state or signal \
+         below.\nThe operating point is that of low idle with nobody steering, or of the manoeuvre \
+         --at a time.\n",
+    );
     text.push_str(
         "\nStates and signals of the run, each with a statistic behind a dot, such as \
          p_in.largest\n\n",
@@ -192,7 +215,7 @@ mod tests {
     fn every_figure_that_is_listed_is_read() {
         let circuit = helmsplit_scenario::Scenario::default().circuit().unwrap();
         let text = listing(&circuit);
-        for id in RUN_CHECKS {
+        for id in RUN_CHECKS.into_iter().chain(MAP_CHECKS) {
             assert!(text.contains(id.name()), "{id:?}");
             assert!(Figure::parse(id.name(), &circuit).is_ok(), "{id:?}");
         }

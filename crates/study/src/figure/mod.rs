@@ -1,7 +1,8 @@
 //! Figures: single numbers that a scenario gives, addressed by id.
 //!
-//! A figure is one of the checks, or a statistic of a state or signal over the run. Studies that
-//! vary parameters (solve-for, influence, mending) ask for figures by [`Figure`] and get numbers.
+//! A figure is one of the checks, of a run or of the operating map; a statistic of a state or
+//! signal over the run; or a reading of the equilibrium at one operating point. Studies that vary
+//! parameters (solve-for, influence, mending) ask for figures by [`Figure`] and get numbers.
 
 mod ask;
 mod parse;
@@ -67,7 +68,20 @@ pub enum Figure {
         /// What is taken of it.
         statistic: Statistic,
     },
+    /// A state or signal at the equilibrium.
+    Rest {
+        /// Short name of the state or signal.
+        column: String,
+    },
+    /// The least damping ratio of the equilibrium.
+    RestDamping,
 }
+
+/// What the id of a figure at rest begins with.
+pub(crate) const REST: &str = "rest.";
+
+/// What the damping ratio is called behind it.
+pub(crate) const REST_DAMPING: &str = "damping";
 
 /// The id, as [`Figure::parse`] reads it: `overshoot`, `p_in.largest`.
 impl fmt::Display for Figure {
@@ -75,6 +89,8 @@ impl fmt::Display for Figure {
         match self {
             Self::Check(id) => f.write_str(id.name()),
             Self::Trace { column, statistic } => write!(f, "{column}.{}", statistic.name()),
+            Self::Rest { column } => write!(f, "{REST}{column}"),
+            Self::RestDamping => write!(f, "{REST}{REST_DAMPING}"),
         }
     }
 }
@@ -91,6 +107,15 @@ pub const RUN_CHECKS: [CheckId; 10] = [
     CheckId::LineVelocity,
     CheckId::ViscosityWindow,
     CheckId::Heat,
+];
+
+/// Checks that the operating map answers, in order.
+pub const MAP_CHECKS: [CheckId; 5] = [
+    CheckId::PriorityAtIdle,
+    CheckId::Regulation,
+    CheckId::Damping,
+    CheckId::StrokeReserve,
+    CheckId::RippleClearance,
 ];
 
 /// Kind of the figure of a check.
@@ -133,7 +158,8 @@ impl Figure {
     pub fn quantity(&self, circuit: &Circuit) -> Quantity {
         match self {
             Self::Check(id) => check_quantity(*id),
-            Self::Trace { column, .. } => trace_columns(circuit)
+            Self::RestDamping => Quantity::Ratio,
+            Self::Trace { column, .. } | Self::Rest { column } => trace_columns(circuit)
                 .find(|(name, _, _)| name == column)
                 .map_or(Quantity::Count, |(_, _, quantity)| quantity),
         }
@@ -145,11 +171,16 @@ impl Figure {
         match self {
             Self::Check(id) => id.label().to_owned(),
             Self::Trace { column, statistic } => {
-                let label = trace_columns(circuit)
-                    .find(|(name, _, _)| name == column)
-                    .map_or(column.as_str(), |(_, label, _)| label);
-                format!("{label}, {}", statistic.label())
+                format!("{}, {}", column_label(circuit, column), statistic.label())
             }
+            Self::Rest { column } => format!("{}, at rest", column_label(circuit, column)),
+            Self::RestDamping => "Least damping ratio, at rest".to_owned(),
         }
     }
+}
+
+fn column_label<'a>(circuit: &'a Circuit, column: &'a str) -> &'a str {
+    trace_columns(circuit)
+        .find(|(name, _, _)| *name == column)
+        .map_or(column, |(_, label, _)| label)
 }

@@ -123,7 +123,7 @@ pub fn influence(
         .collect();
     let answers = watch.each("varying", &variants, |&(place, value)| {
         let change = [(plans[place].id, value)];
-        ask.figures(figures, &change, &mut watch.run_watch())
+        ask.figures(figures, &change, watch)
     });
     let figures_out = figures
         .iter()
@@ -197,7 +197,7 @@ fn bases(
         ..ask.clone()
     };
     let both = watch.each("base", &[ask, &finer], |ask| {
-        ask.figures(figures, &[], &mut watch.run_watch())
+        ask.figures(figures, &[], watch)
     });
     figures
         .iter()

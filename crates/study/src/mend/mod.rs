@@ -11,7 +11,7 @@ mod search;
 use helmsplit_scenario::ParameterId;
 
 use crate::check::{Check, CheckId, Limit, Status};
-use crate::figure::{Ask, Figure, Missing};
+use crate::figure::{Ask, Figure, MAP_CHECKS, Missing};
 use crate::influence::{Influence, InfluenceError, Row, Scale, influence};
 use crate::sizing::Change;
 use crate::study_watch::StudyWatch;
@@ -168,14 +168,15 @@ pub fn mend(ask: &Ask<'_>, fault: &Fault, watch: &StudyWatch<'_>) -> Result<Mend
     if fault.parameters.is_empty() {
         return Err(MendError::NothingToChange);
     }
-    let base = ask.solved(&[], &mut watch.run_watch())?;
+    let with_map = MAP_CHECKS.contains(&fault.check);
+    let base = ask.checks(&[], with_map, watch)?;
     let find = |checks: &[Check]| checks.iter().find(|c| c.id == fault.check).cloned();
     let name = fault.check.name();
     let no_figure = |reason: String| MendError::NoFigure {
         check: name,
         reason,
     };
-    let before = find(&base.checks).ok_or_else(|| no_figure("unknown check".to_owned()))?;
+    let before = find(&base).ok_or_else(|| no_figure("unknown check".to_owned()))?;
     let (Some(limit), Some(figure)) = (before.limit, before.figure) else {
         let reason = match &before.status {
             Status::NotApplicable(reason) => reason.clone(),
@@ -197,7 +198,8 @@ pub fn mend(ask: &Ask<'_>, fault: &Fault, watch: &StudyWatch<'_>) -> Result<Mend
         watch,
         check: fault.check,
         limit,
-        base: &base.checks,
+        with_map,
+        base: &base,
         figure: figure.si,
     };
     let results = watch.each("searching", &ways, |way| search(&job, way));

@@ -5,10 +5,9 @@ use helmsplit_scenario::ParameterId;
 use super::{Dropped, Effect, Proposal};
 use crate::brent::root_between;
 use crate::check::{Check, CheckId, Limit, Status};
-use crate::figure::Ask;
+use crate::figure::{Ask, Figure};
 use crate::parameter_scale::is_allowed;
 use crate::sizing::Change;
-use crate::solve::Solved;
 use crate::study_watch::StudyWatch;
 
 /// A direction in the logarithms of parameters.
@@ -41,6 +40,8 @@ pub(super) struct Job<'a> {
     pub(super) watch: &'a StudyWatch<'a>,
     pub(super) check: CheckId,
     pub(super) limit: Limit,
+    /// Whether the operating map is looked at.
+    pub(super) with_map: bool,
     pub(super) base: &'a [Check],
     /// Figure of the check as it is, SI.
     pub(super) figure: f64,
@@ -62,16 +63,11 @@ const TOLERANCE: f64 = 2e-4;
 const MOST_CALLS: usize = 14;
 
 impl Job<'_> {
-    fn solved(&self, way: &Direction, distance: f64) -> Option<Solved> {
-        let changes = way.at(distance)?;
-        let mut watch = self.watch.run_watch();
-        self.ask.solved(&changes, &mut watch).ok()
-    }
-
     fn figure(&self, way: &Direction, distance: f64) -> Option<f64> {
-        let solved = self.solved(way, distance)?;
-        let check = solved.checks.into_iter().find(|c| c.id == self.check)?;
-        Some(check.figure?.si).filter(|figure| figure.is_finite())
+        let changes = way.at(distance)?;
+        let figure = Figure::Check(self.check);
+        let number = self.ask.figure(&figure, &changes, self.watch).ok()?;
+        number.is_finite().then_some(number)
     }
 
     /// Margin to the limit, negative while the check fails.
@@ -125,13 +121,13 @@ fn close_in(job: &Job<'_>, way: &Direction, failing: (f64, f64), met: (f64, f64)
 
 /// The proposal at a distance, from a full run of it; `None` if the run does not confirm it.
 fn confirmed(job: &Job<'_>, way: &Direction, distance: f64) -> Option<Proposal> {
-    let solved = job.solved(way, distance)?;
-    let check = solved.checks.iter().find(|c| c.id == job.check)?.clone();
+    let moved = way.at(distance)?;
+    let checks = job.ask.checks(&moved, job.with_map, job.watch).ok()?;
+    let check = checks.iter().find(|c| c.id == job.check)?.clone();
     if !matches!(check.status, Status::Pass | Status::Near) {
         return None;
     }
-    let changes = way
-        .at(distance)?
+    let changes = moved
         .into_iter()
         .zip(&way.legs)
         .map(|((id, to), &(_, from, _))| Change { id, from, to })
@@ -139,7 +135,7 @@ fn confirmed(job: &Job<'_>, way: &Direction, distance: f64) -> Option<Proposal> 
     let effects = job
         .base
         .iter()
-        .zip(solved.checks)
+        .zip(checks)
         .filter(|(before, after)| {
             before.id != job.check && (before.figure.is_some() || after.figure.is_some())
         })

@@ -1,14 +1,16 @@
 //! The hand formulas against the full model.
 
-use helmsplit_model::{Circuit, Input, InputSegment, Inputs, Quantity, Readings, Signal};
+use helmsplit_model::{Input, Quantity, Signal};
 use helmsplit_scenario::choice::{PumpCondition, SteeringKind};
 use helmsplit_scenario::parameter::{pump, ratings};
-use helmsplit_scenario::{ParameterId, Scenario};
-use helmsplit_sim::{CircuitOnSegment, Rest, SettleOptions, settle, state_scales};
+use helmsplit_scenario::{Findings, Scenario};
 
 use super::Sizing;
 use crate::check::Measure;
+use crate::equilibrium::{Equilibrium, equilibrium};
+use crate::error::StudyError;
 use crate::figure::Missing;
+use crate::operating::{OperatingPoint, SteeringDuty};
 use crate::study_watch::StudyWatch;
 
 /// One figure, by hand and from the full model.
@@ -24,75 +26,74 @@ pub struct Comparison {
     pub note: &'static str,
 }
 
-/// A circuit at rest: what its signals and states read.
-struct AtRest {
-    circuit: Circuit,
-    state: Vec<f64>,
-    readings: Readings,
-}
-
-impl AtRest {
-    fn signal(&self, signal: Signal) -> f64 {
-        self.readings.get(signal)
-    }
-
-    fn state(&self, name: &str) -> f64 {
-        self.circuit
-            .state_index(name)
-            .map_or(f64::NAN, |place| self.state[place])
-    }
-}
-
-/// Engine speed, wheel rate and changed parameters of a point that is looked at.
-struct Point {
-    speed: ParameterId,
-    wheel_rate: f64,
-    changes: Vec<(ParameterId, f64)>,
-}
-
 /// Sets the figures of a sizing beside those of the full model at rest. `scenario` is the circuit
 /// with the sizing adopted; the consumer runs at the command that the manoeuvre gives it most.
 #[must_use]
 pub fn verify(scenario: &Scenario, sizing: &Sizing, watch: &StudyWatch<'_>) -> Vec<Comparison> {
-    let wheel = scenario.chosen::<SteeringKind>() == SteeringKind::SteeringUnit;
-    let turned = |rate: f64| if wheel { rate } else { 0.0 };
-    let demand = &sizing.demand;
-    let worn = match scenario.chosen::<PumpCondition>() {
-        PumpCondition::WearFactor => vec![(pump::WEAR, demand.wear)],
-        PumpCondition::MeasuredEfficiency => Vec::new(),
+    let points = match points(scenario, sizing) {
+        Ok(points) => points,
+        Err(findings) => {
+            // Without inputs there is no point; each row says so.
+            let missing = Missing::NoCircuit(findings.to_string());
+            let rows = rows(scenario, sizing).into_iter();
+            return rows.map(|row| row.compared(Err(missing.clone()))).collect();
+        }
     };
-    let points = [
-        Point {
-            speed: ratings::TOP_SPEED,
-            wheel_rate: turned(demand.wheel_rate),
-            changes: Vec::new(),
-        },
-        Point {
-            speed: ratings::TOP_SPEED,
-            wheel_rate: 0.0,
-            changes: Vec::new(),
-        },
-        Point {
-            speed: ratings::LOW_IDLE_SPEED,
-            wheel_rate: turned(demand.idle_wheel_rate),
-            changes: worn,
-        },
-    ];
     let rests = watch.each("full model", &points, |point| {
-        at_rest(scenario, point, watch)
+        if watch.is_cancelled() {
+            return Err(Missing::Cancelled);
+        }
+        equilibrium(scenario, point).map_err(|error| match error {
+            StudyError::Equilibrium(error) => Missing::NoOccasion(error.to_string()),
+            error => Missing::NoCircuit(error.to_string()),
+        })
     });
     rows(scenario, sizing)
         .into_iter()
-        .map(|row| Comparison {
-            label: row.label,
-            predicted: row.predicted,
-            simulated: rests[row.point as usize]
-                .as_ref()
-                .map(row.read)
-                .map_err(Clone::clone),
-            note: row.note,
+        .map(|row| {
+            let rest = rests[row.point as usize].as_ref().map_err(Clone::clone);
+            let simulated = rest.and_then(row.read);
+            row.compared(simulated)
         })
         .collect()
+}
+
+/// The points in the order of [`At`]: top speed with the wheel turned, top speed with nobody
+/// steering, low idle with the pump worn and the wheel turned. The consumer runs at the command
+/// that the manoeuvre gives it most.
+fn points(scenario: &Scenario, sizing: &Sizing) -> Result<[OperatingPoint; 3], Findings> {
+    let demand = &sizing.demand;
+    let profiles = scenario.inputs()?;
+    let commands = profiles.get(Input::ExcessCommand).points().iter();
+    let command = commands.map(|&(_, value)| value).fold(0.0, f64::max);
+    let mut start = OperatingPoint::at(scenario, 0.0)?;
+    start.excess.command = command;
+    let has_wheel = scenario.chosen::<SteeringKind>() == SteeringKind::SteeringUnit;
+    let turned = |point: OperatingPoint, wheel_rate: f64| {
+        if has_wheel {
+            point.steering(SteeringDuty::Turning {
+                wheel_rate,
+                load: 0.0,
+            })
+        } else {
+            point
+        }
+    };
+    let top = start.clone().at_speed(scenario.si(ratings::TOP_SPEED));
+    let still = if has_wheel {
+        top.clone().steering(SteeringDuty::Rest)
+    } else {
+        top.clone()
+    };
+    let mut idle = start.at_speed(scenario.si(ratings::LOW_IDLE_SPEED));
+    if scenario.chosen::<PumpCondition>() == PumpCondition::WearFactor {
+        idle.put(pump::WEAR, demand.wear);
+    }
+    Ok([
+        turned(top, demand.wheel_rate),
+        still,
+        turned(idle, demand.idle_wheel_rate),
+    ])
 }
 
 /// Which of the points a row looks at.
@@ -112,6 +113,28 @@ struct Row {
     note: &'static str,
 }
 
+impl Row {
+    fn compared(&self, simulated: Result<f64, Missing>) -> Comparison {
+        Comparison {
+            label: self.label,
+            predicted: self.predicted,
+            simulated,
+            note: self.note,
+        }
+    }
+}
+
+/// Takes a number from an equilibrium.
+type Read = fn(&Equilibrium) -> Result<f64, Missing>;
+
+fn state(rest: &Equilibrium, name: &str) -> Result<f64, Missing> {
+    let none = || Missing::NoOccasion(format!("the circuit has no {name}"));
+    rest.named(name).ok_or_else(none)
+}
+
+const ALONE: &str = "by hand the damping wanted of the valve alone; in the circuit line, consumer and \
+                     cylinder swing along";
+
 const REGULATED: &str =
     "spring and jet add to it as the land opens; the orifice is a standard size";
 
@@ -129,11 +152,16 @@ fn rows(scenario: &Scenario, sizing: &Sizing) -> Vec<Row> {
         note,
     };
     let set_flow = flow(scenario.si(ratings::SET_FLOW));
-    let priority: Read = |rest| rest.signal(Signal::PriorityFlow);
-    let inlet: Read = |rest| rest.state("p_in");
-    let over_orifice: Read = |rest| rest.state("p_in") - rest.state("p_b");
-    let excess: Read = |rest| rest.signal(Signal::ExcessFlow);
-    let over_land: Read = |rest| rest.state("p_in") - rest.state("p_e");
+    let priority: Read = |rest| Ok(rest.signal(Signal::PriorityFlow));
+    let inlet: Read = |rest| state(rest, "p_in");
+    let over_orifice: Read = |rest| Ok(state(rest, "p_in")? - state(rest, "p_b")?);
+    let excess: Read = |rest| Ok(rest.signal(Signal::ExcessFlow));
+    let over_land: Read = |rest| Ok(state(rest, "p_in")? - state(rest, "p_e")?);
+    let damping: Read = |rest| {
+        let none = || Missing::NoOccasion("nothing swings".to_owned());
+        rest.stability.damping.ok_or_else(none)
+    };
+    let ratio = Measure::new(demand.damping_ratio, Quantity::Count);
     vec![
         row(
             "priority flow, top speed, wheel turned",
@@ -184,61 +212,19 @@ fn rows(scenario: &Scenario, sizing: &Sizing) -> Vec<Row> {
             priority,
             "by hand the flow to be met: more is right",
         ),
+        row(
+            "least damping ratio, top speed, wheel turned",
+            ratio,
+            At::Turning,
+            damping,
+            ALONE,
+        ),
+        row(
+            "least damping ratio, top speed, nobody steers",
+            ratio,
+            At::Still,
+            damping,
+            ALONE,
+        ),
     ]
-}
-
-/// Takes a number from a circuit at rest.
-type Read = fn(&AtRest) -> f64;
-
-/// The inputs of a point: those of the manoeuvre's start, with the consumer at its largest command.
-fn inputs_at(scenario: &Scenario, point: &Point) -> Result<Inputs, Missing> {
-    let profiles = scenario
-        .inputs()
-        .map_err(|findings| Missing::NoCircuit(findings.to_string()))?;
-    let mut inputs = profiles.at(0.0);
-    let commands = profiles.get(Input::ExcessCommand).points().iter();
-    let largest = commands.map(|&(_, value)| value).fold(0.0, f64::max);
-    inputs.set(Input::ExcessCommand, largest);
-    inputs.set(Input::EngineSpeed, scenario.si(point.speed));
-    inputs.set(Input::WheelRate, point.wheel_rate);
-    inputs.set(Input::ExternalForce, 0.0);
-    Ok(inputs)
-}
-
-/// The circuit at rest at a point.
-fn at_rest(scenario: &Scenario, point: &Point, watch: &StudyWatch<'_>) -> Result<AtRest, Missing> {
-    let mut scenario = scenario.clone();
-    for &(id, si) in &point.changes {
-        scenario
-            .set_si(id, si)
-            .map_err(|finding| Missing::NoCircuit(finding.to_string()))?;
-    }
-    let circuit = scenario
-        .circuit()
-        .map_err(|findings| Missing::NoCircuit(findings.to_string()))?;
-    let inputs = inputs_at(&scenario, point)?;
-    let scales = state_scales(&circuit);
-    let frozen = CircuitOnSegment::new(&circuit, InputSegment::frozen(inputs), &scales);
-    let settled = settle(
-        &frozen,
-        circuit.drifting_states(),
-        &circuit.cold_state(&inputs),
-        None,
-        &SettleOptions::default(),
-        &mut watch.run_watch(),
-    )
-    .map_err(|error| Missing::NoCircuit(error.to_string()))?;
-    if watch.is_cancelled() {
-        return Err(Missing::Cancelled);
-    }
-    if settled.rest == Rest::NotAtRest {
-        return Err(Missing::NoOccasion(settled.to_string()));
-    }
-    let mut readings = Readings::default();
-    circuit.observe(&inputs, &settled.state, &mut readings);
-    Ok(AtRest {
-        circuit,
-        state: settled.state,
-        readings,
-    })
 }

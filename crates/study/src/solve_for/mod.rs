@@ -68,13 +68,7 @@ pub struct Answer {
 pub fn solve_for(ask: &Ask<'_>, question: &Question, watch: &StudyWatch<'_>) -> Answer {
     let axis = question.axis();
     let points = axis.points(question.points);
-    let at = |value: f64| {
-        ask.figure(
-            &question.figure,
-            &[(question.parameter, value)],
-            &mut watch.run_watch(),
-        )
-    };
+    let at = |value: f64| ask.figure(&question.figure, &[(question.parameter, value)], watch);
     let figures = watch.each("scanning", &points, |&(_, value)| at(value));
     let mut runs = points.len();
     let known: Vec<(f64, f64, f64)> = points
