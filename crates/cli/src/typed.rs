@@ -61,7 +61,7 @@ mod tests {
     /// Exit status of `helmsplit` with arguments.
     fn status(arguments: &[&str]) -> ExitStatus {
         let all = ["helmsplit"].iter().chain(arguments);
-        crate::run(all.map(OsString::from))
+        crate::run(all.map(OsString::from), None)
     }
 
     #[test]
