@@ -3,13 +3,18 @@
 use std::sync::atomic::AtomicBool;
 
 use helmsplit_acceptance::trouble::Tried;
-use helmsplit_scenario::parameter::{main_relief, oil, priority_relief, valve, valve_edges};
+use helmsplit_model::Signal;
+use helmsplit_scenario::parameter::{
+    main_relief, oil, priority_relief, ratings, valve, valve_edges,
+};
 use helmsplit_scenario::{Preset, Scenario};
 use helmsplit_study::figure::{Ask, Figure};
 use helmsplit_study::influence::{design_parameters, influence};
 use helmsplit_study::mend::{Fault, MendError, mend};
 use helmsplit_study::solve_for::{Question, RootKind, solve_for};
-use helmsplit_study::{CheckId, Status, StudyWatch};
+use helmsplit_study::{
+    CheckId, MapWatch, OperatingPoint, Status, StudyWatch, check_maps, equilibrium, map_checks,
+};
 
 fn preset(key: &str) -> Tried<Scenario> {
     Ok(Preset::from_key(key).ok_or("no such preset")?.scenario()?)
@@ -174,5 +179,53 @@ fn a_set_flag_cancels() -> Tried<()> {
     );
     let found = influence(&Ask::of(&bench), &[flow], &[valve::SPRING_RATE], &watch);
     assert!(found.cancelled, "influence");
+    Ok(())
+}
+
+/// At rest the numbers are those of the equilibrium, and the square law of the orifice holds there
+/// without the noise of a run.
+#[test]
+fn figures_at_rest_are_those_of_the_equilibrium() -> Tried<()> {
+    let bench = preset("workshop_bench")?;
+    let circuit = bench.circuit()?;
+    let point = OperatingPoint::at(&bench, 0.0)?.at_speed(bench.si(ratings::TOP_SPEED));
+    let rest = equilibrium(&bench, &point)?;
+    let ask = Ask::of(&bench).at_point(point);
+    let figures = [
+        Figure::parse("rest.damping", &circuit)?,
+        Figure::parse("rest.p_in", &circuit)?,
+        Figure::parse("rest.q_priority", &circuit)?,
+    ];
+    let numbers = ask.figures(&figures, &[], &StudyWatch::none());
+    let expected = [
+        rest.stability.damping.ok_or("nothing swings")?,
+        rest.named("p_in").ok_or("no inlet")?,
+        rest.signal(Signal::PriorityFlow),
+    ];
+    for ((figure, number), expected) in figures.iter().zip(numbers).zip(expected) {
+        assert_eq!(number?.to_bits(), expected.to_bits(), "{figure}");
+    }
+    let orifice = valve_edges::FIXED_ORIFICE_DIAMETER;
+    let found = influence(&ask, &figures[2..], &[orifice], &StudyWatch::none());
+    let row = found.figures.into_iter().next().ok_or("no figure")??.rows;
+    let row = row.first().ok_or("no row")?;
+    assert!(row.resolved, "{row:?}");
+    assert!((row.sensitivity - 2.0).abs() < 0.06, "{row:?}");
+    Ok(())
+}
+
+#[test]
+fn figures_of_the_map_are_those_of_its_checks() -> Tried<()> {
+    let bench = preset("workshop_bench")?;
+    let circuit = bench.circuit()?;
+    let ask = Ask::of(&bench);
+    let checks = map_checks(&bench, &check_maps(&bench, MapWatch::none())?);
+    for id in [CheckId::Regulation, CheckId::Damping] {
+        let check = checks.iter().find(|check| check.id == id);
+        let figure = check.and_then(|check| check.figure).ok_or("no figure")?;
+        let asked = Figure::parse(id.name(), &circuit)?;
+        let number = ask.figure(&asked, &[], &StudyWatch::none())?;
+        assert_eq!(number.to_bits(), figure.si.to_bits(), "{id:?}");
+    }
     Ok(())
 }
