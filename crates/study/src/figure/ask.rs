@@ -254,6 +254,7 @@ impl Figure {
         match self {
             Self::Rest { column } => rest
                 .named(column)
+                .or_else(|| signal_of(rest, column))
                 .ok_or_else(|| none("the equilibrium has no such reading")),
             _ => rest
                 .stability
@@ -261,6 +262,13 @@ impl Figure {
                 .ok_or_else(|| none("nothing swings at this operating point")),
         }
     }
+}
+
+/// A signal of an equilibrium by its short name; [`Equilibrium::named`] gives states.
+fn signal_of(rest: &Equilibrium, name: &str) -> Option<f64> {
+    let signals = rest.circuit().signals().iter();
+    let found = signals.copied().find(|signal| signal.name() == name)?;
+    Some(rest.signal(found))
 }
 
 fn number(check: &Check) -> Result<f64, Missing> {
