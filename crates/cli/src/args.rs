@@ -10,6 +10,7 @@ use helmsplit_sim::Rows;
 use helmsplit_study::Layer;
 use helmsplit_view::BuiltInTheme;
 
+use crate::study_args::{InfluenceArguments, MendArguments, SizeArguments, SolveForArguments};
 use crate::window::Renderer;
 
 const CAUTIONS: &str = "\
@@ -81,6 +82,14 @@ pub(crate) enum Command {
     Damping(DampingArguments),
     /// Draw the circuit, or its valve in section, as SVG
     Draw(DrawArguments),
+    /// Size a circuit from its demand, step by step with formulas, and compare with the full model
+    Size(Box<SizeArguments>),
+    /// Find the values of a parameter that give a figure its target
+    SolveFor(SolveForArguments),
+    /// Rank the parameters by their influence on figures
+    Influence(InfluenceArguments),
+    /// Find the smallest changes that meet a failing check
+    Mend(MendArguments),
     /// Write a commented circuit file from a preset
     New(NewArguments),
     /// List or search the parameters of a circuit file

@@ -15,7 +15,11 @@ mod output;
 mod point;
 mod progress;
 mod report_json;
+mod size_json;
+mod study_args;
+mod study_json;
 mod table_csv;
+mod typed;
 mod verdict;
 mod window;
 

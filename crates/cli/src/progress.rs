@@ -6,7 +6,7 @@ use std::sync::atomic::{AtomicBool, Ordering};
 use std::time::Duration;
 
 use helmsplit_sim::Watch;
-use helmsplit_study::{MapNews, MapWatch};
+use helmsplit_study::{MapNews, MapWatch, Progress, StudyWatch};
 use indicatif::{ProgressBar, ProgressDrawTarget, ProgressStyle};
 
 use crate::output::say;
@@ -55,6 +55,31 @@ pub(crate) fn watched_map<T>(work: impl FnOnce(MapWatch<'_>) -> T) -> T {
     };
     let watch = MapWatch::none().with_cancel(cancel).with_news(&hear);
     let result = work(watch);
+    bar.finish_and_clear();
+    result
+}
+
+/// Calls `work` with a watch that counts the runs of a study where standard error is a terminal,
+/// and that stops on Ctrl-C.
+pub(crate) fn studied<T>(work: impl FnOnce(&StudyWatch<'_>) -> T) -> T {
+    let cancel = cancel_flag();
+    let bar = if std::io::stderr().is_terminal() {
+        ProgressBar::with_draw_target(None, ProgressDrawTarget::stderr_with_hz(10))
+    } else {
+        ProgressBar::hidden()
+    };
+    let style = ProgressStyle::with_template("{msg} {bar:40} {pos} of {len} runs  {elapsed}")
+        .unwrap_or_else(|_template| ProgressStyle::default_bar());
+    bar.set_style(style);
+    let report = |progress: Progress| {
+        bar.set_message(progress.stage);
+        bar.set_length(progress.total as u64);
+        bar.set_position(progress.done as u64);
+    };
+    let watch = StudyWatch::none()
+        .with_cancel(cancel)
+        .with_progress(&report);
+    let result = work(&watch);
     bar.finish_and_clear();
     result
 }

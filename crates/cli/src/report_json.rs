@@ -2,7 +2,8 @@
 
 use std::path::PathBuf;
 
-use helmsplit_scenario::UnitSystem;
+use helmsplit_scenario::convert::display_unit;
+use helmsplit_scenario::{ParameterId, UnitSystem};
 use helmsplit_sim::{Audit, Rest, RunEnd, Statistics};
 use helmsplit_study::{Check, Event, Limit, Measure, Solved, Status};
 use serde::Serialize;
@@ -38,7 +39,7 @@ struct StartNote {
 }
 
 #[derive(Serialize)]
-struct CheckNote<'a> {
+pub(crate) struct CheckNote<'a> {
     id: &'static str,
     label: &'static str,
     #[serde(flatten)]
@@ -57,8 +58,8 @@ struct CheckNote<'a> {
 
 /// A value in the chosen unit; limits and margin of a check share the unit of its figure.
 #[derive(Serialize)]
-struct Number {
-    value: f64,
+pub(crate) struct Number {
+    pub(crate) value: f64,
     unit: &'static str,
 }
 
@@ -69,10 +70,19 @@ struct NamedNumber<'a> {
     number: Number,
 }
 
-fn number(measure: Measure, units: UnitSystem) -> Number {
+pub(crate) fn number(measure: Measure, units: UnitSystem) -> Number {
     let unit = units.unit(measure.quantity);
     Number {
         value: unit.value_from_si(measure.si),
+        unit: unit.symbol(),
+    }
+}
+
+/// A value (SI) of a parameter in the unit that the parameter is shown in.
+pub(crate) fn parameter_number(id: ParameterId, si: f64, units: UnitSystem) -> Number {
+    let unit = display_unit(id.parameter(), units);
+    Number {
+        value: unit.value_from_si(si),
         unit: unit.symbol(),
     }
 }
@@ -107,7 +117,7 @@ pub(crate) fn report(
     Ok(format!("{}\n", serde_json::to_string_pretty(&report)?))
 }
 
-fn note(check: &Check, units: UnitSystem) -> CheckNote<'_> {
+pub(crate) fn note(check: &Check, units: UnitSystem) -> CheckNote<'_> {
     let unit = check.figure.map(|f| units.unit(f.quantity));
     let shown = |si: f64| unit.map(|u| u.value_from_si(si));
     let (low, high) = match check.limit {

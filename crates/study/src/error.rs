@@ -16,6 +16,16 @@ pub enum StudyError {
     /// The scenario starts from a saved state, and none was handed over.
     #[error("the circuit starts from a saved state, and the state was not read")]
     StateNotGiven,
+    /// A value of a sizing's demand cannot be used.
+    #[error("{name}: {value} (SI) cannot be used; {allowed}")]
+    Demand {
+        /// Which value.
+        name: &'static str,
+        /// What was given, SI.
+        value: f64,
+        /// What is accepted.
+        allowed: &'static str,
+    },
     /// The solver refused the task.
     #[error(transparent)]
     Sim(#[from] SimError),

@@ -6,26 +6,37 @@
 //!   [`Equilibrium`] there, with the balance of forces on the spool and its [`Stability`];
 //!   [`Equilibrium::modes`] says who swings; [`mode_path`] and [`border`] follow that along a
 //!   sweep.
+//! - Design: [`sizing`] from the demand to the dimensions; [`solve_for`] any parameter against any
+//!   [`figure`]; [`influence`] of parameters on figures; [`mend`] the smallest change that meets a
+//!   failing check. They take a [`StudyWatch`]: progress, and a flag that cancels.
 //!
 //! # Conventions
 //! SI throughout. A check that a single run cannot answer says so ([`Status::NeedsMap`]) and
 //! gives no number; one that the circuit or the manoeuvre gives no occasion for is
 //! [`Status::NotApplicable`], with the reason.
 
+mod brent;
 mod check;
 mod checks;
 mod dropout;
 mod equilibrium;
 mod error;
 mod event;
+pub mod figure;
 mod frequency;
+pub mod influence;
 mod kick;
 mod lock;
 mod map;
+pub mod mend;
 mod modes;
 mod operating;
+mod parameter_scale;
 mod response;
+pub mod sizing;
 mod solve;
+pub mod solve_for;
+mod study_watch;
 mod window;
 
 pub use check::{Check, CheckId, Evidence, Limit, Measure, Operand, Status};
@@ -56,4 +67,5 @@ pub use operating::{
 };
 pub use response::{Response, response_after};
 pub use solve::{Solved, solve};
+pub use study_watch::{Progress, StudyWatch};
 pub use window::{Window, windows};

@@ -22,6 +22,7 @@ pub mod diagram;
 pub mod drawing;
 mod error;
 pub mod figures;
+mod influence_bars;
 mod moment;
 pub mod plot;
 mod ramp;
@@ -34,11 +35,13 @@ mod table;
 mod theme;
 mod theme_scene;
 mod unit_text;
+mod worked;
 
 pub use colour::{Colour, ColourError};
 pub use diagram::circuit_scene;
 pub use drawing::valve_scene;
 pub use error::ViewError;
+pub use influence_bars::{influence_scene, sensitivity_text};
 pub use moment::Moment;
 pub use ramp::{PressureScale, Ramp};
 pub use readings::{Reading, part_readings};
@@ -49,6 +52,7 @@ pub use theme::{
     Wash,
 };
 pub use unit_text::unit_text;
+pub use worked::{change_table, comparison_table, sizing_table, worked_formula, worked_steps};
 
 // Lets the figures of the tests serve the gallery too.
 #[cfg(test)]

@@ -14,6 +14,7 @@ mod orifice;
 mod pipe;
 mod pump;
 mod reference_traces;
+mod sizing;
 mod spool;
 mod steering;
 mod stiffness;
@@ -125,6 +126,11 @@ pub const GROUPS: &[Group] = &[
         title: "Whole circuits: an earlier study",
         about: earlier_study::ABOUT,
         checks: earlier_study::checks,
+    },
+    Group {
+        title: "Sizing",
+        about: sizing::ABOUT,
+        checks: sizing::checks,
     },
     Group {
         title: "Units",

@@ -5,10 +5,16 @@ mod completions;
 mod convert;
 mod damping;
 mod draw;
+mod influence;
 mod map;
+mod mend;
 mod new;
 mod parameters;
 mod run;
+mod size;
+mod solve_for;
+
+pub(crate) use size::Sized;
 
 use std::path::{Path, PathBuf};
 
@@ -40,6 +46,10 @@ pub(crate) fn dispatch(
         Some(Command::Map(arguments)) => map::map(&arguments),
         Some(Command::Damping(arguments)) => damping::damping(&arguments),
         Some(Command::Draw(arguments)) => draw::draw(&arguments),
+        Some(Command::Size(arguments)) => size::size(&arguments),
+        Some(Command::SolveFor(arguments)) => solve_for::solve_for(&arguments),
+        Some(Command::Influence(arguments)) => influence::influence(&arguments),
+        Some(Command::Mend(arguments)) => mend::mend(&arguments),
         Some(Command::New(arguments)) => new::new(&arguments),
         Some(Command::Parameters(arguments)) => parameters::parameters(&arguments),
         Some(Command::Convert(arguments)) => convert::convert(&arguments),
