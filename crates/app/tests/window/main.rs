@@ -14,6 +14,7 @@ mod keyboard;
 mod lists;
 mod looks;
 mod manoeuvre;
+mod menus;
 mod names;
 mod recovery;
 mod rig;
