@@ -6,9 +6,9 @@ use super::thing::Thing;
 
 /// What a word is worth where it is found: the more a person would look for the thing under it,
 /// the more.
-const PATH: u32 = 150;
-const SYMBOL: u32 = 120;
-const SYMBOL_ANY_CASE: u32 = 100;
+const PATH: u32 = 300;
+const SYMBOL: u32 = 240;
+const SYMBOL_ANY_CASE: u32 = 200;
 const LABEL_WORD: u32 = 90;
 const LABEL_BEGINNING: u32 = 70;
 const LABEL_INSIDE: u32 = 40;
@@ -185,14 +185,10 @@ mod tests {
         for (typed, label) in [
             ("overshoot", "Overshoot"),
             ("undo", "Undo"),
-            ("psi", "Units: US: psi, gpm, in"),
-            ("dark", "Appearance: Dark"),
+            ("psi", "Units, US: psi, gpm, in"),
+            ("dark", "Appearance, dark"),
         ] {
-            assert!(
-                first(typed).starts_with(label) || first(typed).contains(label),
-                "{typed}: {}",
-                first(typed)
-            );
+            assert_eq!(first(typed), label, "{typed}");
         }
     }
 

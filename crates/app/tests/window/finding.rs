@@ -3,6 +3,7 @@
 use egui::Key;
 use egui::accesskit::Role;
 use egui_kittest::kittest::Queryable;
+use helmsplit_app::Appearance;
 use helmsplit_scenario::parameters;
 
 use crate::rig::Rig;
@@ -94,7 +95,7 @@ fn verdicts_commands_and_slips_of_the_key_are_found() {
     assert!(rig.says("Evidence: overshoot"), "a verdict");
     rig.find("appearance dark");
     assert!(
-        rig.app().settings().appearance == helmsplit_app::Appearance::Dark,
+        rig.app().settings().appearance == Appearance::Dark,
         "a command"
     );
     rig.open_finder("oriffice");
@@ -117,4 +118,28 @@ fn a_match_can_be_clicked() {
     rig.click_beginning("Spool diameter, ");
     let focused = rig.focused().expect("a field has the focus");
     assert_eq!(focused.name, "Spool diameter", "{focused:?}");
+}
+
+/// Writes finder and hints as PNG into the folder named by `HELMSPLIT_SHOTS`.
+#[test]
+#[ignore = "writes pictures to look at"]
+fn screenshots() {
+    let folder = std::env::var("HELMSPLIT_SHOTS").expect("a folder");
+    for (name, appearance) in [("light", Appearance::Light), ("dark", Appearance::Dark)] {
+        let mut rig = Rig::with([1280.0, 720.0], appearance, "orchard carrier");
+        let shoot = |rig: &mut Rig, page: &str| {
+            let picture = rig.harness.render().expect("a picture");
+            let path = format!("{folder}/{page}-{name}.png");
+            picture.save(&path).expect("written");
+        };
+        rig.open_finder("spool");
+        shoot(&mut rig, "finder");
+        rig.harness.key_press(Key::Enter);
+        rig.settle();
+        shoot(&mut rig, "found");
+        rig.menu("Help", "First steps");
+        shoot(&mut rig, "hint");
+        rig.menu("Help", "About and cautions");
+        shoot(&mut rig, "about");
+    }
 }

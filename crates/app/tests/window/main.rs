@@ -13,6 +13,7 @@ mod keyboard;
 mod lists;
 mod looks;
 mod manoeuvre;
+mod menus;
 mod names;
 mod recovery;
 mod rig;
