@@ -5,6 +5,7 @@ use serde::{Deserialize, Serialize};
 
 use crate::action::Action;
 use crate::command::{Command, Stage};
+use crate::kept::KeptAction;
 use crate::look::Look;
 
 /// Number of hints.
@@ -16,7 +17,8 @@ const HINTS: [&str; COUNT] = [
      Up and Down in its field: the run is solved anew as it changes.",
     "Click a verdict in the row above, such as overshoot: the traces go to its moment, and its \
      formula, numbers and source open.",
-    "Keep this run, then change a value: the kept run stays behind the live one to compare with.",
+    "Keep this run with Ctrl+K or Keep run above the traces, then change a value: the kept run stays \
+     behind the live one to compare with.",
 ];
 
 /// Which hints are still wanted. Kept from one start to the next.
@@ -57,6 +59,7 @@ impl FirstSteps {
         let hint = match action {
             Action::Edit(Command::SetText { .. }, Stage::Ongoing) => 0,
             Action::Evidence(_) => 1,
+            Action::Kept(KeptAction::Keep(_)) => 2,
             _ => return,
         };
         self.done[hint] = true;
@@ -96,7 +99,7 @@ mod tests {
         assert_eq!(steps.current(), Some(0), "saving is no answer to a hint");
         steps.skip();
         assert_eq!(steps.current(), Some(2), "the second was done before");
-        steps.skip();
+        steps.follow(&Action::Kept(KeptAction::Keep("as drawn".to_owned())));
         assert!(steps.is_over(), "nothing left");
         steps.skip();
         assert_eq!(steps, FirstSteps::over(), "and it stays so");

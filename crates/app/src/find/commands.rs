@@ -6,15 +6,16 @@ use super::thing::{Findable, Thing, plain};
 use crate::action::Action;
 use crate::dialogs::Dialog;
 use crate::drawing::Export;
+use crate::export::{COPY_TABLE, COPY_VALUES, ExportKind};
+use crate::kept::KeptAction;
 use crate::menu;
-use crate::settings::{Appearance, SCALES, units_name};
+use crate::settings::{Appearance, SCALES, Settings, units_name};
 
 const GROUP: &str = "Command";
 
 /// Every command, in the order of the menus.
 pub(super) fn commands(findable: &Findable<'_>) -> Vec<Thing> {
     let (document, settings) = (findable.document, findable.settings);
-    let now = |is_now: bool| if is_now { "now" } else { "" }.to_owned();
     let mut commands: Vec<Thing> = menu::NAMED_PRESETS
         .iter()
         .map(|(preset, name)| {
@@ -29,6 +30,14 @@ pub(super) fn commands(findable: &Findable<'_>) -> Vec<Thing> {
         let label = format!("Export, {}", export.name());
         commands.push(plain(&label, GROUP, menu::write_drawing(document, export)));
     }
+    for kind in ExportKind::ALL {
+        let label = format!("Export, {}", kind.item().trim_end_matches('.'));
+        commands.push(plain(&label, GROUP, Action::AskExport(kind)));
+    }
+    commands.push(plain(COPY_VALUES, GROUP, Action::CopyValues));
+    commands.push(plain(COPY_TABLE, GROUP, Action::CopyTable));
+    let keep = Action::Kept(KeptAction::AskToKeep);
+    commands.push(plain("Keep this run", GROUP, keep));
     for (label, step, action) in [
         ("Undo", document.undo_name(), Action::Undo),
         ("Redo", document.redo_name(), Action::Redo),
@@ -39,6 +48,20 @@ pub(super) fn commands(findable: &Findable<'_>) -> Vec<Thing> {
             ..plain(label, GROUP, action)
         });
     }
+    commands.extend(view(settings));
+    commands.push(plain("First steps", GROUP, Action::FirstSteps));
+    let keys = Action::Show(Dialog::Keys);
+    commands.push(plain("Keys and gestures", GROUP, keys));
+    let about = Action::Show(Dialog::About);
+    commands.push(plain("About and cautions", GROUP, about));
+    commands.push(plain("Quit", GROUP, Action::Quit));
+    commands
+}
+
+/// Units, appearance and scale.
+fn view(settings: &Settings) -> Vec<Thing> {
+    let now = |is_now: bool| if is_now { "now" } else { "" }.to_owned();
+    let mut commands = Vec::new();
     for units in UnitSystem::ALL {
         let label = format!("Units, {}", units_name(units));
         commands.push(Thing {
@@ -60,11 +83,5 @@ pub(super) fn commands(findable: &Findable<'_>) -> Vec<Thing> {
             ..plain(&label, GROUP, Action::Scale(scale))
         });
     }
-    commands.push(plain("First steps", GROUP, Action::FirstSteps));
-    let keys = Action::Show(Dialog::Keys);
-    commands.push(plain("Keys and gestures", GROUP, keys));
-    let about = Action::Show(Dialog::About);
-    commands.push(plain("About and cautions", GROUP, about));
-    commands.push(plain("Quit", GROUP, Action::Quit));
     commands
 }

@@ -42,3 +42,18 @@ fn hints_do_not_come_unasked_once_they_are_over() {
     let rig = Rig::with([1280.0, 720.0], Appearance::Light, "orchard carrier");
     assert!(!rig.says("First steps,"), "the rig begins with them over");
 }
+
+#[test]
+fn keeping_a_run_ends_the_hints() {
+    let mut rig = new_user();
+    rig.click("Skip this hint");
+    rig.click("Skip this hint");
+    assert!(rig.says("3 of 3"), "the last hint");
+    rig.harness
+        .key_press_modifiers(egui::Modifiers::COMMAND, Key::K);
+    rig.settle();
+    rig.harness.key_press(Key::Enter);
+    rig.settle();
+    assert_eq!(rig.app().kept().runs().len(), 1, "kept");
+    assert!(rig.app().settings().first_steps.is_over(), "and over");
+}
