@@ -6,8 +6,8 @@ use super::thing::Thing;
 
 /// What a word is worth where it is found: the more a person would look for the thing under it,
 /// the more.
-const PATH: u32 = 300;
-const SYMBOL: u32 = 240;
+const PATH: u32 = 400;
+const SYMBOL: u32 = 300;
 const SYMBOL_ANY_CASE: u32 = 200;
 const LABEL_WORD: u32 = 90;
 const LABEL_BEGINNING: u32 = 70;
