@@ -57,7 +57,7 @@ pub struct Equilibrium {
 /// use helmsplit_scenario::PRESETS;
 /// use helmsplit_study::{OperatingPoint, equilibrium};
 ///
-/// let scenario = PRESETS[0].scenario()?;
+/// let scenario = PRESETS[0].scenario().map_err(|findings| findings.to_string())?;
 /// let idle = OperatingPoint::resting(&scenario);
 /// let rest = equilibrium(&scenario, &idle)?;
 /// // 15 L/min within a tenth go to the steering.
