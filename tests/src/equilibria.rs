@@ -44,7 +44,7 @@ pub fn bench() -> Scenario {
 /// priority port of 300 mm2.
 ///
 /// # Panics
-/// As [`bench`].
+/// As [`fn@bench`].
 #[must_use]
 pub fn bench_point(speed_rpm: f64, steering_bar: f64, excess_bar: f64) -> OperatingPoint {
     OperatingPoint::resting(&bench())
