@@ -4,10 +4,11 @@ use super::SvgOptions;
 use super::chart_panel::PanelPainter;
 use super::layout::{MARGIN, SMALL_ROW, SUBTITLE_ROW, TITLE_ROW};
 use super::pen::{Text, rectangle};
+use super::root::Root;
 use super::text_width::wrapped;
 use super::xml::{Px, Xml};
 use crate::chart::{Chart, ChartPanel, LineRole};
-use crate::style::{FONT_FAMILY, TextSize};
+use crate::style::TextSize;
 
 /// A sheet is at least this wide, px.
 const LEAST_WIDTH: f64 = 320.0;
@@ -92,25 +93,12 @@ pub fn svg_from_chart(chart: &Chart, options: &SvgOptions<'_>) -> String {
 }
 
 fn open_root(xml: &mut Xml, chart: &Chart, id: &str, (width, height): (f64, f64)) {
-    let (width, height) = (Px(width), Px(height));
-    let view = format!("0 0 {width} {height}");
-    let (title_id, text_id) = (format!("{id}-title"), format!("{id}-text"));
-    let labels = format!("{title_id} {text_id}");
-    xml.open(
-        "svg",
-        &[
-            ("xmlns", &"http://www.w3.org/2000/svg"),
-            ("viewBox", &view),
-            ("width", &width),
-            ("height", &height),
-            ("role", &"img"),
-            ("aria-labelledby", &labels),
-            ("font-family", &FONT_FAMILY),
-            ("style", &"font-variant-numeric: tabular-nums"),
-        ],
-    );
-    xml.text("title", &[("id", &title_id)], &chart.title);
-    xml.text("desc", &[("id", &text_id)], &described(chart));
+    let root = Root {
+        id,
+        corner: (0.0, 0.0),
+        size: (width, height),
+    };
+    root.open(xml, &chart.title, &described(chart));
 }
 
 /// What a reader who does not see the chart is told.

@@ -8,6 +8,7 @@ mod end_labels;
 mod layout;
 mod panel;
 mod pen;
+mod root;
 mod scene;
 mod sheet;
 mod spread;

@@ -4,10 +4,10 @@ use std::fmt::Write as _;
 
 use kurbo::{BezPath, PathEl};
 
+use super::root::Root;
 use super::xml::{Attribute, Px, Xml};
 use crate::colour::Colour;
 use crate::scene::{Anchor, Line, Paint, Part, Prim, Scene, Stroke, Tone};
-use crate::style::FONT_FAMILY;
 use crate::theme::Theme;
 
 /// The scene as a self-contained SVG document with title and description; the same text for the
@@ -18,24 +18,12 @@ pub fn svg_from_scene(scene: &Scene, theme: &Theme, id: &str) -> String {
     let mut xml = Xml::default();
     let bounds = scene.bounds;
     let (width, height) = (Px(bounds.width()), Px(bounds.height()));
-    let view = format!("{} {} {width} {height}", Px(bounds.x0), Px(bounds.y0));
-    let (title_id, text_id) = (format!("{id}-title"), format!("{id}-text"));
-    let labels = format!("{title_id} {text_id}");
-    xml.open(
-        "svg",
-        &[
-            ("xmlns", &"http://www.w3.org/2000/svg"),
-            ("viewBox", &view),
-            ("width", &width),
-            ("height", &height),
-            ("role", &"img"),
-            ("aria-labelledby", &labels),
-            ("font-family", &FONT_FAMILY),
-            ("style", &"font-variant-numeric: tabular-nums"),
-        ],
-    );
-    xml.text("title", &[("id", &title_id)], &scene.title);
-    xml.text("desc", &[("id", &text_id)], &scene.description);
+    let root = Root {
+        id,
+        corner: (bounds.x0, bounds.y0),
+        size: (bounds.width(), bounds.height()),
+    };
+    root.open(&mut xml, &scene.title, &scene.description);
     let (x, y) = (Px(bounds.x0), Px(bounds.y0));
     xml.empty(
         "rect",

@@ -5,9 +5,10 @@ use super::describe::described;
 use super::layout::{MARGIN, SMALL_ROW, SUBTITLE_ROW, Sheet, TITLE_ROW};
 use super::panel::PanelPainter;
 use super::pen::{Anchor, Stroke, Text, rectangle};
+use super::root::Root;
 use super::xml::{Px, Xml};
 use crate::plot::Figure;
-use crate::style::{FONT_FAMILY, TextSize};
+use crate::style::TextSize;
 use crate::theme::Theme;
 
 /// Length of the ticks of the time axis, px.
@@ -59,28 +60,12 @@ pub(super) fn drawn(sheet: &Sheet<'_>, figure: &Figure, options: &SvgOptions<'_>
 }
 
 fn open_root(xml: &mut Xml, sheet: &Sheet<'_>, figure: &Figure, options: &SvgOptions<'_>) {
-    let (width, height) = (Px(sheet.width), Px(sheet.height));
-    let view = format!("0 0 {width} {height}");
-    let (title_id, text_id) = (
-        format!("{}-title", options.id),
-        format!("{}-text", options.id),
-    );
-    let labels = format!("{title_id} {text_id}");
-    xml.open(
-        "svg",
-        &[
-            ("xmlns", &"http://www.w3.org/2000/svg"),
-            ("viewBox", &view),
-            ("width", &width),
-            ("height", &height),
-            ("role", &"img"),
-            ("aria-labelledby", &labels),
-            ("font-family", &FONT_FAMILY),
-            ("style", &"font-variant-numeric: tabular-nums"),
-        ],
-    );
-    xml.text("title", &[("id", &title_id)], &figure.title);
-    xml.text("desc", &[("id", &text_id)], &described(figure));
+    let root = Root {
+        id: options.id,
+        corner: (0.0, 0.0),
+        size: (sheet.width, sheet.height),
+    };
+    root.open(xml, &figure.title, &described(figure));
 }
 
 fn draw_titles(xml: &mut Xml, sheet: &Sheet<'_>, theme: &Theme) {
